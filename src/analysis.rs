@@ -1,0 +1,209 @@
+//! One analysis: a checked case and options in; plan, worksheet, bands and
+//! notices out.
+//!
+//! What the command line and library users call. It hands numbers from one
+//! step to the next, so that the steps need not know each other.
+
+use crate::case::{Case, Checked};
+use crate::diag::{Notice, Notices, Severity, SourceFile};
+use crate::method::MethodError;
+use crate::physics::METHODS;
+use crate::plan::{Evaluation, Named, Plan, Planned, SlotId, SlotRefusal, backward};
+use crate::rules::{Facts, Withheld, apply};
+use crate::sheet::{Line, Numbering, Row, lines, register};
+use crate::uncertainty::{Band, Linear, Sampling, Trials, bands, linear, sample};
+use sha2::{Digest, Sha256};
+
+/// What an analysis may be told.
+#[derive(Debug, Clone, Copy)]
+pub struct Options {
+    /// Seed of the random numbers.
+    pub seed: u64,
+    /// How many trials.
+    pub trials: Trials,
+}
+
+impl Default for Options {
+    fn default() -> Self {
+        Options { seed: 1, trials: Trials::UntilStable }
+    }
+}
+
+/// A result that stands.
+#[derive(Debug, Clone)]
+pub struct Answered {
+    /// Its name.
+    pub named: Named,
+    /// Its band.
+    pub band: Band,
+    /// The number of the line that gives it; `None` for an entry.
+    pub line: Option<usize>,
+}
+
+/// Everything an analysis found.
+#[derive(Debug)]
+pub struct Analysis {
+    /// The case.
+    pub case: Case,
+    /// The plan.
+    pub plan: Plan,
+    /// The plan at the best estimates.
+    pub evaluation: Evaluation,
+    /// Results that stand, in the order of the plan.
+    pub results: Vec<Answered>,
+    /// Results that were refused or withheld, with the reason.
+    pub refused: Vec<(Named, String)>,
+    /// The register of entries.
+    pub register: Vec<Row>,
+    /// The worked lines.
+    pub lines: Vec<Line>,
+    /// The sampling.
+    pub sampling: Sampling,
+    /// The seed used.
+    pub seed: u64,
+}
+
+/// What came of a case file.
+#[derive(Debug)]
+pub struct Outcome {
+    /// The analysis, unless the file itself has faults.
+    pub analysis: Option<Analysis>,
+    /// Everything there is to say.
+    pub notices: Notices,
+    /// The files it was read from; the case file first.
+    pub files: Vec<SourceFile>,
+}
+
+impl Outcome {
+    /// Exit status of the program: 0 done, 1 done with unanswered warnings,
+    /// 2 refused.
+    pub fn status(&self) -> u8 {
+        if self.notices.any_stop() { 2 } else { u8::from(self.notices.any_open_warning()) }
+    }
+
+    /// SHA-256 of one of the files, in hexadecimal.
+    pub fn sha256(&self, file: usize) -> String {
+        let digest = Sha256::digest(self.files.get(file).map_or(&[] as &[u8], |f| f.text.as_bytes()));
+        digest.iter().map(|byte| format!("{byte:02x}")).collect()
+    }
+}
+
+/// The method errors that a case may change.
+pub fn method_errors() -> Vec<MethodError> {
+    METHODS.iter().flat_map(|m| m.errors.iter().copied()).collect()
+}
+
+/// Reads and analyses a case file; `load` gives the text of files it names.
+pub fn analyse(name: &str, text: &str, load: crate::case::Load<'_>, options: Options) -> Outcome {
+    let Checked { case, mut notices, files } = crate::case::read(name, text, &method_errors(), load);
+    let Some(case) = case else { return Outcome { analysis: None, notices, files } };
+    let Planned { plan, notices: planned } = backward(&case);
+    notices.extend(planned);
+    let (analysis, found) = evaluate(case, plan, options);
+    notices.extend(found);
+    let notices = answered(notices, &analysis.case).sorted();
+    Outcome { analysis: Some(analysis), notices, files }
+}
+
+fn evaluate(case: Case, plan: Plan, options: Options) -> (Analysis, Vec<Notice>) {
+    let evaluation = plan.evaluate(&plan.estimates());
+    let standing: Vec<usize> =
+        (0..plan.results.len()).filter(|i| evaluation.value(plan.results[*i].slot).is_some()).collect();
+    let wanted: Vec<SlotId> = standing.iter().map(|i| plan.results[*i].slot).collect();
+    let scales: Vec<f64> = wanted.iter().map(|s| case.identity.system.unit(plan.slot(*s).kind).1).collect();
+    let centres: Vec<f64> = wanted.iter().map(|s| evaluation.values[s.0]).collect();
+    let sampling = if wanted.is_empty() {
+        Sampling { trials: 0, impossible: 0, stable: true, results: Vec::new() }
+    } else {
+        sample(&plan, &wanted, &centres, &scales, options.seed, options.trials)
+    };
+    let propagated: Vec<Option<Linear>> = wanted.iter().map(|s| linear(&plan, &evaluation, *s)).collect();
+    let mut all: Vec<Option<Band>> = vec![None; plan.results.len()];
+    for (index, band) in standing.iter().zip(bands(propagated, &sampling, &scales)) {
+        all[*index] = band;
+    }
+    let facts = Facts { case: &case, plan: &plan, evaluation: &evaluation, bands: &all, sampling: &sampling };
+    let findings = apply(&facts);
+    let (kept, refused) = withhold(&plan, &evaluation, &all, &findings);
+    let numbering = Numbering::new(&plan, &kept.iter().map(|(n, _)| n.slot).collect::<Vec<_>>());
+    let u: Vec<f64> = (0..plan.slots.len()).map(|s| slot_u(&plan, &evaluation, SlotId(s))).collect();
+    let lines = lines(&plan, &evaluation, &u, &numbering, case.identity.system);
+    let results = kept
+        .into_iter()
+        .map(|(named, band)| {
+            let line = plan.call_of(named.slot).and_then(|c| numbering.line(c));
+            Answered { named, band, line }
+        })
+        .collect();
+    let register = register(&plan);
+    let notices = findings.into_iter().map(|f| f.notice).collect();
+    let analysis =
+        Analysis { case, plan, evaluation, results, refused, register, lines, sampling, seed: options.seed };
+    (analysis, notices)
+}
+
+fn slot_u(plan: &Plan, evaluation: &Evaluation, slot: SlotId) -> f64 {
+    linear(plan, evaluation, slot).map_or(0.0, |l| l.u)
+}
+
+/// Separates the results that stand from those that were refused or that a
+/// stop takes away.
+fn withhold(
+    plan: &Plan,
+    evaluation: &Evaluation,
+    bands: &[Option<Band>],
+    findings: &[crate::rules::Finding],
+) -> (Vec<(Named, Band)>, Vec<(Named, String)>) {
+    let mut kept = Vec::new();
+    let mut refused = Vec::new();
+    for (named, band) in plan.results.iter().zip(bands) {
+        let touches = |w: Withheld| match w {
+            Withheld::Nothing => false,
+            Withheld::All => true,
+            Withheld::Impact => !named.id.ends_with(".post_impact_speed"),
+        };
+        let stop = findings.iter().find(|f| f.notice.severity == Severity::Stop && touches(f.withheld));
+        match (band, stop) {
+            (_, Some(finding)) => refused.push((named.clone(), finding.notice.message.clone())),
+            (Some(band), None) => kept.push((named.clone(), band.clone())),
+            (None, None) => refused.push((named.clone(), reason(plan, evaluation, named.slot))),
+        }
+    }
+    (kept, refused)
+}
+
+fn reason(plan: &Plan, evaluation: &Evaluation, slot: SlotId) -> String {
+    let here = |slot: SlotId| match evaluation.refusals[slot.0] {
+        Some(SlotRefusal::Here(refusal)) => Some(refusal.reason.to_string()),
+        _ => None,
+    };
+    match evaluation.refusals[slot.0] {
+        Some(SlotRefusal::Earlier(call)) => plan.calls.get(call).and_then(|c| here(c.out)),
+        _ => here(slot),
+    }
+    .unwrap_or_else(|| "too few physically possible trials".into())
+}
+
+/// Puts the case's answers to the warnings they answer; an answer to nothing
+/// is noted, since it may be a slip.
+fn answered(mut notices: Notices, case: &Case) -> Notices {
+    let mut unused = Vec::new();
+    for answer in &case.answers {
+        let mut used = false;
+        for notice in notices.iter_mut().filter(|n| n.code == answer.code && n.severity == Severity::Warn) {
+            notice.answer = Some(format!("{} ({})", answer.reason, answer.by));
+            used = true;
+        }
+        if !used {
+            let stopped = notices.iter().any(|n| n.code == answer.code && n.severity == Severity::Stop);
+            let message = if stopped {
+                format!("the answer to {} has no effect: a STOP cannot be answered away", answer.code)
+            } else {
+                format!("the answer to {} answers no warning of this case", answer.code)
+            };
+            unused.push(Notice::note("CF-10", message).at(answer.place));
+        }
+    }
+    notices.extend(unused);
+    notices
+}

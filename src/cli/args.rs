@@ -1,0 +1,93 @@
+//! The words the program understands.
+
+use crate::analysis::Options;
+use crate::uncertainty::Trials;
+use clap::{Args, Parser, Subcommand};
+use std::path::PathBuf;
+
+/// Work backward from a measured crash scene to the speeds before impact.
+#[derive(Debug, Parser)]
+#[command(
+    name = "retrodict",
+    version,
+    about = "Work backward from a measured crash scene to the speeds before impact",
+    long_about = "Work backward from a measured crash scene to the speeds before impact, with bands, sources and a \
+                  worksheet that a second expert can check line by line.\n\nA calculation aid and record, not an \
+                  opinion: a licensed or accredited reconstructionist must adopt, change or reject every result.",
+    after_help = "Examples:\n  retrodict check cases/quarry-road.toml\n  retrodict solve cases/quarry-road.toml\n  \
+                  retrodict print cases/quarry-road.toml -o quarry-road.pdf\n\nExit status: 0 done, 1 done with \
+                  unanswered warnings, 2 refused."
+)]
+pub struct Arguments {
+    /// What to do.
+    #[command(subcommand)]
+    pub command: Command,
+}
+
+/// What to do.
+#[derive(Debug, Subcommand)]
+pub enum Command {
+    /// Check a case file and report all its faults and what the rules say.
+    #[command(after_help = "Example:\n  retrodict check cases/quarry-road.toml")]
+    Check(CheckArgs),
+    /// Work a case backward and show the worksheet.
+    #[command(after_help = "Examples:\n  retrodict solve cases/quarry-road.toml\n  retrodict solve \
+                            cases/quarry-road.toml --json > quarry-road.json\n  retrodict solve \
+                            cases/quarry-road.toml --seed 7 --trials 1000000")]
+    Solve(SolveArgs),
+    /// Work a case backward and write the worksheet as a PDF file.
+    #[command(after_help = "Examples:\n  retrodict print cases/quarry-road.toml\n  retrodict print \
+                            cases/quarry-road.toml -o worksheet.pdf")]
+    Print(PrintArgs),
+}
+
+/// Arguments of `check`.
+#[derive(Debug, Args)]
+pub struct CheckArgs {
+    /// The case file.
+    pub case: PathBuf,
+}
+
+/// Arguments of `solve`.
+#[derive(Debug, Args)]
+pub struct SolveArgs {
+    /// The case file.
+    pub case: PathBuf,
+    /// Print one JSON object, values in SI units.
+    #[arg(long)]
+    pub json: bool,
+    /// How to draw.
+    #[command(flatten)]
+    pub draws: DrawArgs,
+}
+
+/// Arguments of `print`.
+#[derive(Debug, Args)]
+pub struct PrintArgs {
+    /// The case file.
+    pub case: PathBuf,
+    /// The PDF file to write; without it, the case's name with .pdf, here.
+    #[arg(short, long)]
+    pub output: Option<PathBuf>,
+    /// How to draw.
+    #[command(flatten)]
+    pub draws: DrawArgs,
+}
+
+/// How the random numbers are drawn.
+#[derive(Debug, Args)]
+pub struct DrawArgs {
+    /// Seed of the random numbers.
+    #[arg(long, default_value_t = 1)]
+    pub seed: u64,
+    /// Trials, rounded up to blocks of 10 000 [default: until every printed digit is stable]
+    #[arg(long, value_parser = clap::value_parser!(u64).range(1..=1_000_000_000))]
+    pub trials: Option<u64>,
+}
+
+impl DrawArgs {
+    /// The same as options of an analysis.
+    pub fn options(&self) -> Options {
+        Options { seed: self.seed, trials: self.trials.map_or(Trials::UntilStable, Trials::Fixed) }
+    }
+}

@@ -1,0 +1,111 @@
+//! Evaluates a plan for many trials at once.
+
+use super::{Plan, SlotId};
+use crate::method::{Column, Lanes, WIDTH};
+use crate::stats::{Generator, Ziggurat};
+use crate::units::Kind;
+
+/// Columns of one block of trials, reused from block to block.
+#[derive(Debug)]
+pub struct Block {
+    values: Vec<Lanes>,
+    sines: Vec<Lanes>,
+    cosines: Vec<Lanes>,
+    /// Where a slot's sine and cosine are kept, if it is an angle that enters
+    /// a formula; place 0 is shared by all others and never read.
+    trig: Vec<usize>,
+    /// Which calls are run: those that a result needs.
+    live: Vec<bool>,
+    /// Trials in which every line that was run gave a number.
+    possible: [bool; WIDTH],
+}
+
+impl Block {
+    /// Room for one block of a plan. Only what `wanted` needs is computed.
+    pub fn new(plan: &Plan, wanted: &[SlotId]) -> Self {
+        let live = plan.needed(wanted);
+        let mut trig = vec![0; plan.slots.len()];
+        let mut count = 1;
+        for (call, _) in plan.calls.iter().zip(&live).filter(|(_, live)| **live) {
+            for slot in &call.ins {
+                if plan.slot(*slot).kind == Kind::Angle && trig[slot.0] == 0 {
+                    trig[slot.0] = count;
+                    count += 1;
+                }
+            }
+        }
+        Block {
+            values: vec![[0.0; WIDTH]; plan.slots.len()],
+            sines: vec![[0.0; WIDTH]; count],
+            cosines: vec![[1.0; WIDTH]; count],
+            trig,
+            live,
+            possible: [true; WIDTH],
+        }
+    }
+
+    /// Draws all inputs from their distributions. A draw that is physically
+    /// impossible becomes no number, so that its trial is refused and counted.
+    pub fn draw(&mut self, plan: &Plan, ziggurat: &Ziggurat, rng: &mut Generator) {
+        for input in &plan.inputs {
+            let column = &mut self.values[input.slot.0];
+            input.dist.fill(column, ziggurat, rng);
+            let (lo, hi) = input.bounds;
+            if lo > f64::NEG_INFINITY || hi < f64::INFINITY {
+                column.iter_mut().filter(|v| **v < lo || **v > hi).for_each(|v| *v = f64::NAN);
+            }
+        }
+    }
+
+    /// Computes every line for the drawn inputs.
+    pub fn compute(&mut self, plan: &Plan) {
+        self.possible = [true; WIDTH];
+        for input in &plan.inputs {
+            self.note_impossible(input.slot);
+            self.prepare_angle(input.slot);
+        }
+        for (index, call) in plan.calls.iter().enumerate() {
+            if !self.live[index] {
+                continue;
+            }
+            let mut out = std::mem::replace(&mut self.values[call.out.0], [0.0; WIDTH]);
+            let columns: Vec<Column<'_>> = call.ins.iter().map(|slot| self.column(*slot)).collect();
+            call.node.batch(&columns, &mut out);
+            self.values[call.out.0] = out;
+            self.note_impossible(call.out);
+            self.prepare_angle(call.out);
+        }
+    }
+
+    fn column(&self, slot: SlotId) -> Column<'_> {
+        let trig = self.trig[slot.0];
+        Column { value: &self.values[slot.0], sin: &self.sines[trig], cos: &self.cosines[trig] }
+    }
+
+    fn note_impossible(&mut self, slot: SlotId) {
+        for (possible, value) in self.possible.iter_mut().zip(&self.values[slot.0]) {
+            *possible &= value.is_finite();
+        }
+    }
+
+    fn prepare_angle(&mut self, slot: SlotId) {
+        let trig = self.trig[slot.0];
+        if trig == 0 {
+            return;
+        }
+        let pairs = self.sines[trig].iter_mut().zip(&mut self.cosines[trig]);
+        for (value, (sin, cos)) in self.values[slot.0].iter().zip(pairs) {
+            (*sin, *cos) = libm::sincos(*value);
+        }
+    }
+
+    /// The trials of a slot.
+    pub fn trials(&self, slot: SlotId) -> &Lanes {
+        &self.values[slot.0]
+    }
+
+    /// Which trials are physically possible.
+    pub fn possible(&self) -> &[bool; WIDTH] {
+        &self.possible
+    }
+}

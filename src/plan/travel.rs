@@ -1,0 +1,227 @@
+//! Travel in stretches: lengths, drags, speeds at the joins.
+
+use super::backward::Backward;
+use super::{Role, SlotId};
+use crate::case::{Begin, Drag, Entry, Phase, StandsFor, Stretch, StretchLength, TestId, Unit};
+use crate::physics::{braking, path};
+use crate::stats::Dist;
+use crate::units::Kind;
+
+/// Names of one stretch: `A after impact, stretch 2`.
+struct Names {
+    /// Subscript: `A,2`.
+    index: String,
+    /// Mark of the phase on symbols: a prime after impact.
+    prime: &'static str,
+    /// In words.
+    words: String,
+}
+
+/// Chains the stretches of a phase from its end to its start and gives the
+/// speed there. `end_speed` is `None` for rest.
+pub(super) fn chain(
+    w: &mut Backward<'_>,
+    unit: &Unit,
+    phase: &Phase,
+    end_speed: Option<SlotId>,
+) -> Option<SlotId> {
+    let after = matches!(phase.begin, Begin::Impact(_));
+    let mut speed = end_speed;
+    for (index, stretch) in phase.travel.iter().enumerate().rev() {
+        let names = Names {
+            index: format!("{},{}", unit.id, index + 1),
+            prime: if after { "′" } else { "" },
+            words: match (after, phase.travel.len()) {
+                (true, 1) => format!("{} after impact", unit.id),
+                (true, _) => format!("{} after impact, stretch {}", unit.id, index + 1),
+                (false, 1) => format!("{}'s marks", unit.id),
+                (false, _) => format!("{}'s marks, stretch {}", unit.id, index + 1),
+            },
+        };
+        let length = length(w, phase, stretch, &names);
+        let drag = drag(w, stretch, after, &names);
+        let symbol = match (index, after) {
+            (0, true) => format!("v′_{{{}}}", unit.id),
+            (0, false) => format!("v_{{{},s}}", unit.id),
+            _ => format!("v{}_{{{}}}", names.prime, names.index),
+        };
+        let title = match (index, after) {
+            (0, true) => format!("Speed of {} after impact", unit.id),
+            (0, false) => format!("Speed of {} at the start of its marks", unit.id),
+            _ => format!("Speed at the start of: {}", names.words),
+        };
+        let place = Some(stretch.place);
+        speed = Some(match speed {
+            None => w.b.call(braking::StopSpeed::NODE, &[w.gravity, drag, length], symbol, title, place),
+            Some(end) => {
+                w.b.call(braking::BrakedSpeed::NODE, &[end, w.gravity, drag, length], symbol, title, place)
+            }
+        });
+    }
+    speed
+}
+
+fn length(w: &mut Backward<'_>, phase: &Phase, stretch: &Stretch, names: &Names) -> SlotId {
+    let symbol = format!("d{}_{{{}}}", names.prime, names.index);
+    match &stretch.length {
+        StretchLength::Entered(entry) => {
+            let slot = w.b.entry(symbol, entry, Role::Measured);
+            chord(w, phase, slot, entry, names);
+            slot
+        }
+        StretchLength::AlongPath(from, to) => along_path(w, phase, *from, *to, &symbol, names),
+    }
+}
+
+/// An entered length that is the only one of a phase with a path can be held
+/// against the straight line between the path's ends.
+fn chord(w: &mut Backward<'_>, phase: &Phase, length: SlotId, entry: &Entry, names: &Names) {
+    let (Some(first), Some(last)) = (phase.path.first(), phase.path.last()) else { return };
+    if phase.travel.len() != 1 || first == last {
+        return;
+    }
+    let ins = w.two_points(*first, *last);
+    let symbol = format!("c{}_{{{}}}", names.prime, names.index);
+    let title = format!("Straight line from separation to rest: {}", names.words);
+    let slot = w.b.call(path::Leg::NODE, &ins, symbol, title, Some(entry.place));
+    w.b.plan.watch.chords.push((length, slot, entry.place, names.words.clone()));
+}
+
+fn along_path(
+    w: &mut Backward<'_>,
+    phase: &Phase,
+    from: usize,
+    to: usize,
+    symbol: &str,
+    names: &Names,
+) -> SlotId {
+    let points = &phase.path[from..=to];
+    let pieces = points.len() - 1;
+    let mut total = None;
+    for (i, pair) in points.windows(2).enumerate() {
+        let ins = w.two_points(pair[0], pair[1]);
+        let numbers = [pair[0], pair[1]].map(|p| w.case.points[p.0].number.clone());
+        let own =
+            if pieces == 1 { symbol.to_string() } else { format!("d_{{{}–{}}}", numbers[0], numbers[1]) };
+        let title = format!("Distance from point {} to point {}: {}", numbers[0], numbers[1], names.words);
+        let piece = w.b.call(path::Leg::NODE, &ins, own, title, Some(phase.place));
+        total = Some(match total {
+            None => piece,
+            Some(so_far) => {
+                let sum = if i + 1 == pieces { symbol.to_string() } else { format!("{symbol}*") };
+                let title = format!("Length so far: {}", names.words);
+                w.b.call(path::LongerPath::NODE, &[so_far, piece], sum, title, Some(phase.place))
+            }
+        });
+    }
+    // A path has at least two points, so there is at least one piece.
+    total.unwrap_or(w.gravity)
+}
+
+fn drag(w: &mut Backward<'_>, stretch: &Stretch, after: bool, names: &Names) -> SlotId {
+    let symbol = format!("f{}_{{{}}}", names.prime, names.index);
+    let title = format!("Drag factor: {}", names.words);
+    let place = Some(stretch.place);
+    let grade = stretch
+        .grade
+        .as_ref()
+        .map(|entry| w.b.entry(format!("G{}_{{{}}}", names.prime, names.index), entry, Role::Measured));
+    match &stretch.drag {
+        Drag::Friction { test, share } => {
+            let k = friction_error(w, *test, after);
+            let mu = friction(w, *test);
+            if k.is_none() && grade.is_none() && share.dist == Dist::Exact(1.0) {
+                return mu;
+            }
+            let k = k.unwrap_or_else(|| one(w));
+            let share = w.b.entry(format!("η{}_{{{}}}", names.prime, names.index), share, Role::Measured);
+            match grade {
+                None => w.b.call(braking::LevelDrag::NODE, &[k, share, mu], symbol, title, place),
+                Some(grade) => {
+                    w.b.call(braking::GradeDrag::NODE, &[k, share, mu, grade], symbol, title, place)
+                }
+            }
+        }
+        Drag::Stated { factor, includes_grade } => {
+            let grade = grade.filter(|_| !includes_grade);
+            let stated = w.b.entry(format!("f{}_{{s,{}}}", names.prime, names.index), factor, Role::Measured);
+            let k = after.then(|| {
+                w.method_error(
+                    format!("k′_{{{}}}", names.index),
+                    &braking::TRAVEL_ERROR,
+                    &format!(": {}", names.words),
+                )
+            });
+            match (k, grade) {
+                (None, None) => stated,
+                (Some(k), None) => w.b.call(braking::StatedDrag::NODE, &[k, stated], symbol, title, place),
+                (k, Some(grade)) => {
+                    let k = k.unwrap_or_else(|| one(w));
+                    w.b.call(braking::StatedDragOnGrade::NODE, &[k, stated, grade], symbol, title, place)
+                }
+            }
+        }
+    }
+}
+
+/// The method error on a test's friction: shared by all that use the test.
+/// Before impact there is none on top of 'this vehicle', whose scatter is in
+/// the test's own uncertainty.
+fn friction_error(w: &mut Backward<'_>, test: TestId, after: bool) -> Option<SlotId> {
+    let t = &w.case.tests[test.0];
+    let whose = format!(", test {}", t.id);
+    if after {
+        Some(w.method_error(format!("k′_{{{}}}", t.id), &braking::TRAVEL_ERROR, &whose))
+    } else if t.stands_for == StandsFor::SurfaceMean {
+        Some(w.method_error(format!("k_{{{}}}", t.id), &braking::SKID_ERROR, &whose))
+    } else {
+        None
+    }
+}
+
+/// The friction of a test, added once.
+pub(super) fn friction(w: &mut Backward<'_>, test: TestId) -> SlotId {
+    let t = &w.case.tests[test.0];
+    let symbol = format!("μ_{{{}}}", t.id);
+    if let Some(slot) = w.shared(&symbol) {
+        return slot;
+    }
+    let slot = match &t.grade {
+        None => w.b.entry(symbol.clone(), &t.drag, Role::Measured),
+        Some(grade) => {
+            let drag = w.b.entry(format!("f_{{{}}}", t.id), &t.drag, Role::Measured);
+            let grade = w.b.entry(format!("G_{{{}}}", t.id), grade, Role::Measured);
+            let title = format!("Friction of the surface from test {}", t.id);
+            w.b.call(braking::TestFriction::NODE, &[drag, grade], symbol.clone(), title, Some(t.drag.place))
+        }
+    };
+    w.share(symbol, slot);
+    slot
+}
+
+/// A factor of exactly one, where a formula has room for a method error that
+/// does not apply.
+fn one(w: &mut Backward<'_>) -> SlotId {
+    let symbol = "k_{0}";
+    if let Some(slot) = w.shared(symbol) {
+        return slot;
+    }
+    let slot = w.b.assumed(
+        symbol,
+        Kind::Ratio,
+        1.0,
+        "no method error",
+        "none on top of 'this vehicle here' or of a stated drag factor",
+    );
+    w.share(symbol.into(), slot);
+    slot
+}
+
+/// A friction to take for the road's impulse on a unit: that of its first
+/// stretch after impact.
+pub(super) fn first_friction(w: &mut Backward<'_>, phase: &Phase) -> Option<SlotId> {
+    match &phase.travel.first()?.drag {
+        Drag::Friction { test, .. } => Some(friction(w, *test)),
+        Drag::Stated { .. } => None,
+    }
+}

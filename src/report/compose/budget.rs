@@ -1,0 +1,99 @@
+//! Uncertainty budgets: which entry drives which result, and how much a unit
+//! of it is worth.
+
+use crate::analysis::{Analysis, Answered};
+use crate::report::document::{Block, Column, Table};
+use crate::uncertainty::Share;
+use crate::units::{Kind, decimals_for, fixed, significant};
+
+/// Contributors shown for each result; the rest is summed up.
+const SHOWN: usize = 8;
+
+pub(super) fn section(analysis: &Analysis) -> Vec<Block> {
+    let mut blocks = vec![
+        Block::Heading { level: 1, text: "Uncertainty budget".into() },
+        Block::Paragraph(
+            "By linear propagation with exact derivatives (JCGM 100). The bounding case adds up every entry at its \
+             worst at once, limits or 95 %; it is not a 95 % band. Every direction of the momentum solution is listed, \
+             however little it weighs."
+                .into(),
+        ),
+    ];
+    for answered in &analysis.results {
+        if !answered.band.linear.shares.is_empty() {
+            blocks.push(Block::Heading { level: 2, text: answered.named.label.clone() });
+            blocks.push(Block::Table(table(analysis, answered)));
+            blocks.push(Block::Paragraph(summary(analysis, answered)));
+        }
+    }
+    blocks
+}
+
+fn table(analysis: &Analysis, answered: &Answered) -> Table {
+    let kind = analysis.plan.slot(answered.named.slot).kind;
+    let (unit, scale) = analysis.case.identity.system.unit(kind);
+    let mut rows = Vec::new();
+    for (rank, share) in answered.band.linear.shares.iter().enumerate() {
+        let input = analysis.plan.inputs[share.input].slot;
+        let is_direction =
+            analysis.plan.slot(input).kind == Kind::Angle && answered.named.id.ends_with("_speed");
+        if rank < SHOWN || is_direction {
+            rows.push(row(analysis, share, unit, scale));
+        }
+    }
+    Table {
+        columns: vec![
+            Column::words("Symbol", 0.8),
+            Column::words("Entry", 3.4),
+            Column::numbers("u of it", 1.1),
+            Column::numbers("Worth", 1.9),
+            Column::numbers(
+                &format!("Part of u{}", if unit.is_empty() { String::new() } else { format!(", {unit}") }),
+                1.0,
+            ),
+            Column::numbers("Share", 0.8),
+        ],
+        rows,
+    }
+}
+
+fn row(analysis: &Analysis, share: &Share, unit: &str, scale: f64) -> Vec<String> {
+    let input = &analysis.plan.inputs[share.input];
+    let slot = analysis.plan.slot(input.slot);
+    let (own_unit, own_scale) = analysis.case.identity.system.unit(slot.kind);
+    let per = if own_unit.is_empty() { "1".to_string() } else { own_unit.to_string() };
+    let worth = share.slope * own_scale / scale;
+    vec![
+        slot.symbol.clone(),
+        format!("{} (entry {})", input.name, share.input + 1),
+        format!("{} {own_unit}", significant(input.dist.u() / own_scale, 2)).trim_end().to_string(),
+        format!("{} {unit} per {per}", significant(worth, 2)),
+        significant(share.part.abs() / scale, 2),
+        format!("{}\u{a0}%", fixed(share.of_variance * 100.0, 1)),
+    ]
+}
+
+fn summary(analysis: &Analysis, answered: &Answered) -> String {
+    let kind = analysis.plan.slot(answered.named.slot).kind;
+    let (unit, scale) = analysis.case.identity.system.unit(kind);
+    let l = &answered.band.linear;
+    let s = &answered.band.sampled;
+    let decimals = decimals_for(l.u / scale).unwrap_or(3);
+    let show = |v: f64| fixed(v / scale, decimals);
+    let dof = if l.dof > 1e4 { "∞".to_string() } else { fixed(l.dof, 0) };
+    format!(
+        "Linear: u = {} {unit}, effective degrees of freedom {dof}, k = {}, 95 % from {} to {}. Monte Carlo: u = {}, \
+         95 % from {} to {}, shortest {} to {}. Bounding case: {} to {} {unit}.",
+        show(l.u),
+        fixed(l.k, 2),
+        show(l.low()),
+        show(l.high()),
+        show(s.u),
+        show(s.low),
+        show(s.high),
+        show(s.shortest.0),
+        show(s.shortest.1),
+        show(l.value - l.worst),
+        show(l.value + l.worst),
+    )
+}

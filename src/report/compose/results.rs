@@ -1,0 +1,165 @@
+//! Results with their bands and what drives them.
+
+use crate::analysis::{Analysis, Answered};
+use crate::report::document::{Block, Column, Table};
+use crate::uncertainty::{Band, Basis};
+use crate::units::{Kind, System, clock, compass, decimals_for, fixed, significant};
+
+pub(super) fn section(analysis: &Analysis) -> Vec<Block> {
+    let mut blocks = vec![Block::Heading { level: 1, text: "Results".into() }];
+    if analysis.results.is_empty() {
+        blocks.push(Block::Paragraph("No result stands.".into()));
+    } else {
+        blocks.push(Block::Table(table(analysis)));
+        blocks.push(Block::Paragraph(reading(analysis)));
+    }
+    for answered in &analysis.results {
+        if let Some(remark) = answered.named.remark {
+            blocks.push(Block::Paragraph(format!("{}: {remark}.", answered.named.label)));
+        }
+    }
+    blocks.extend(directions(analysis));
+    blocks.extend(refused(analysis));
+    blocks
+}
+
+fn table(analysis: &Analysis) -> Table {
+    let system = analysis.case.identity.system;
+    let rows = analysis
+        .results
+        .iter()
+        .map(|a| {
+            let kind = analysis.plan.slot(a.named.slot).kind;
+            let text = BandText::new(&a.band, kind, system);
+            vec![
+                a.named.label.clone(),
+                text.value,
+                format!("{} to {}", text.low, text.high),
+                text.u,
+                contributors(analysis, a),
+                a.line.map_or_else(|| "entry".into(), |n| format!("[{n}]")),
+            ]
+        })
+        .collect();
+    Table {
+        columns: vec![
+            Column::words("Result", 2.6),
+            Column::numbers("Value", 1.3),
+            Column::numbers("95 % band", 1.7),
+            Column::numbers("u", 0.8),
+            Column::words("Biggest contributors (share of variance)", 3.4),
+            Column::numbers("Line", 0.6),
+        ],
+        rows,
+    }
+}
+
+/// A band in the reader's units, at the digits u deserves.
+pub(super) struct BandText {
+    pub(super) value: String,
+    pub(super) low: String,
+    pub(super) high: String,
+    pub(super) u: String,
+}
+
+impl BandText {
+    pub(super) fn new(band: &Band, kind: Kind, system: System) -> Self {
+        let (unit, scale) = system.unit(kind);
+        let gap = if unit.is_empty() || kind == Kind::Angle { "" } else { "\u{a0}" };
+        let show = |v: f64| match decimals_for(band.u / scale) {
+            Some(decimals) => fixed(v / scale, decimals),
+            None => significant(v / scale, 5),
+        };
+        let u = if band.u > 0.0 { show(band.u) } else { "exact".into() };
+        BandText {
+            value: format!("{}{gap}{unit}", show(band.value)),
+            low: show(band.low),
+            high: show(band.high),
+            u,
+        }
+    }
+}
+
+/// The three biggest contributors with their shares.
+fn contributors(analysis: &Analysis, answered: &Answered) -> String {
+    let shares = answered.band.linear.shares.iter().take(3);
+    let parts: Vec<String> = shares
+        .filter(|s| s.of_variance >= 0.01)
+        .map(|s| {
+            let slot = analysis.plan.inputs[s.input].slot;
+            let symbol = &analysis.plan.slot(slot).symbol;
+            format!("{symbol} {}\u{a0}%", fixed(s.of_variance * 100.0, 0))
+        })
+        .collect();
+    if parts.is_empty() { "none".into() } else { parts.join(", ") }
+}
+
+/// How the bands are to be read.
+fn reading(analysis: &Analysis) -> String {
+    let of = |basis: Basis| analysis.results.iter().filter(|r| r.band.basis == basis).count();
+    let how = match (of(Basis::Linear), of(Basis::MonteCarlo)) {
+        (0, 0) => "Nothing that enters has an uncertainty, so there are no bands.".to_string(),
+        (_, 0) => "Bands are by linear propagation, confirmed by Monte Carlo.".to_string(),
+        (0, _) => "Bands are by Monte Carlo; linear propagation differs from it.".to_string(),
+        (_, _) => {
+            let names: Vec<&str> = analysis
+                .results
+                .iter()
+                .filter(|r| r.band.basis == Basis::MonteCarlo)
+                .map(|r| r.named.label.as_str())
+                .collect();
+            format!(
+                "Bands are by linear propagation, confirmed by Monte Carlo; except by Monte Carlo, from which linear \
+                 propagation differs, for: {}. There the value is the mean of the trials and may differ a little from \
+                 the worked line.",
+                names.join("; ")
+            )
+        }
+    };
+    format!(
+        "A 95 % band is probabilistically symmetric; u is the standard uncertainty. Both hold the listed entries and \
+         the stated method errors only. {how} Symbols are those of the register and of the worked lines."
+    )
+}
+
+/// Directions of force by the clock and courses by the compass: a mistaken
+/// sign is easier to see in words.
+fn directions(analysis: &Analysis) -> Vec<Block> {
+    let mut blocks = Vec::new();
+    for a in analysis.results.iter().filter(|a| a.named.id.ends_with(".pdof")) {
+        blocks.push(Block::Paragraph(format!(
+            "{}: the force came from {}.",
+            a.named.label,
+            clock(a.band.value)
+        )));
+    }
+    if let Some(impact) = &analysis.plan.watch.momentum {
+        for i in [0, 1] {
+            let word = |slot| analysis.evaluation.value(slot).map(compass);
+            let before = impact.approach[i].and_then(word);
+            if let Some(after) = word(impact.course[i]) {
+                let came =
+                    before.map_or("stood before impact".to_string(), |d| format!("came travelling {d}"));
+                blocks.push(Block::Paragraph(format!(
+                    "{} {came} and left travelling {after}.",
+                    impact.names[i]
+                )));
+            }
+        }
+    }
+    blocks
+}
+
+fn refused(analysis: &Analysis) -> Vec<Block> {
+    if analysis.refused.is_empty() {
+        return Vec::new();
+    }
+    let rows = analysis.refused.iter().map(|(n, why)| vec![n.label.clone(), why.clone()]).collect();
+    vec![
+        Block::Heading { level: 2, text: "Refused results".into() },
+        Block::Table(Table {
+            columns: vec![Column::words("Result", 1.0), Column::words("Why there is none", 2.4)],
+            rows,
+        }),
+    ]
+}

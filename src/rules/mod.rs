@@ -1,0 +1,102 @@
+//! Rules: what the trade knows to go wrong, one file each.
+//!
+//! In: the case, its plan, its evaluation and its bands. Out: findings, each
+//! with a code and what it withholds. Rules about a single entry live with the
+//! case's checkers, since they need its text. Never changes a number.
+//! A new rule is one file with its code, its test, its sentence and its
+//! remedy, and one line in [`RULES`].
+
+mod b4_shared;
+mod b6_impossible;
+mod d10_marks;
+mod d2_crest;
+mod m10_restitution;
+mod m12_closure;
+mod m13_chord;
+mod m1_condition;
+mod m2_heavy_light;
+mod m3_departure;
+mod refused;
+mod s1_stability;
+
+use crate::case::Case;
+use crate::diag::Notice;
+use crate::plan::{Evaluation, Plan, SlotId};
+use crate::uncertainty::{Band, Sampling};
+
+/// What a rule may look at.
+pub struct Facts<'a> {
+    /// The case.
+    pub case: &'a Case,
+    /// Its plan.
+    pub plan: &'a Plan,
+    /// The plan at the best estimates.
+    pub evaluation: &'a Evaluation,
+    /// A band for each result of the plan; `None` where it was refused.
+    pub bands: &'a [Option<Band>],
+    /// The sampling behind the bands.
+    pub sampling: &'a Sampling,
+}
+
+/// What a stop takes away.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Withheld {
+    /// Nothing.
+    Nothing,
+    /// Every result of the impact; speeds after it stand.
+    Impact,
+    /// Every result.
+    All,
+}
+
+/// A notice and what it withholds.
+#[derive(Debug, Clone)]
+pub struct Finding {
+    /// The notice.
+    pub notice: Notice,
+    /// What it takes away.
+    pub withheld: Withheld,
+}
+
+impl From<Notice> for Finding {
+    fn from(notice: Notice) -> Self {
+        Finding { notice, withheld: Withheld::Nothing }
+    }
+}
+
+type Rule = fn(&Facts<'_>) -> Vec<Finding>;
+
+/// All rules that look at a whole case, in the order of their codes.
+const RULES: &[Rule] = &[
+    b4_shared::rule,
+    b6_impossible::rule,
+    d2_crest::rule,
+    d10_marks::rule,
+    m1_condition::rule,
+    m2_heavy_light::rule,
+    m3_departure::rule,
+    m10_restitution::rule,
+    m12_closure::rule,
+    m13_chord::rule,
+    s1_stability::rule,
+    refused::rule,
+];
+
+/// Applies every rule.
+pub fn apply(facts: &Facts<'_>) -> Vec<Finding> {
+    RULES.iter().flat_map(|rule| rule(facts)).collect()
+}
+
+impl Facts<'_> {
+    /// Standard uncertainty of any slot, by linear propagation.
+    fn u(&self, slot: SlotId) -> f64 {
+        let parts = self.plan.inputs.iter().zip(self.evaluation.row(slot)).map(|(i, s)| i.dist.u() * s);
+        parts.map(|p| p * p).sum::<f64>().sqrt()
+    }
+
+    /// The band of a result.
+    fn band(&self, id: &str) -> Option<&Band> {
+        let index = self.plan.results.iter().position(|r| r.id == id)?;
+        self.bands.get(index)?.as_ref()
+    }
+}

@@ -1,0 +1,78 @@
+//! Which band is printed: the linear one where Monte Carlo confirms it, else
+//! the Monte Carlo one.
+
+use super::{Linear, Sampled, Sampling};
+use crate::units::decimals_for;
+use serde::Serialize;
+
+/// Where a band comes from.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize)]
+pub enum Basis {
+    /// Linear propagation, confirmed by Monte Carlo.
+    #[serde(rename = "linear")]
+    Linear,
+    /// Monte Carlo, from which linear propagation differs.
+    #[serde(rename = "Monte Carlo")]
+    MonteCarlo,
+    /// Nothing that enters has an uncertainty.
+    #[serde(rename = "exact inputs")]
+    Exact,
+}
+
+/// A result with its 95 % band.
+#[derive(Debug, Clone)]
+pub struct Band {
+    /// Value.
+    pub value: f64,
+    /// Standard uncertainty.
+    pub u: f64,
+    /// Lower end of the 95 % interval.
+    pub low: f64,
+    /// Upper end.
+    pub high: f64,
+    /// Where they come from.
+    pub basis: Basis,
+    /// By linear propagation.
+    pub linear: Linear,
+    /// By Monte Carlo.
+    pub sampled: Sampled,
+    /// Largest difference of the two interval ends, and how much is allowed.
+    pub difference: (f64, f64),
+}
+
+/// Joins both propagations; results that either refused are left out.
+/// `scales` are the reader's units (SI per unit).
+pub fn bands(linear: Vec<Option<Linear>>, sampling: &Sampling, scales: &[f64]) -> Vec<Option<Band>> {
+    linear
+        .into_iter()
+        .zip(&sampling.results)
+        .zip(scales)
+        .map(|((linear, sampled), scale)| Some(band(linear?, (*sampled)?, *scale)))
+        .collect()
+}
+
+/// JCGM 101, 8.1: linear propagation is confirmed when both interval ends
+/// agree within half a unit of the last digit regarded as meaningful. One
+/// digit of u is so regarded here (7.9.2 allows one or two), and the sampling
+/// error of the ends is granted on top.
+fn band(linear: Linear, sampled: Sampled, scale: f64) -> Band {
+    let sure = linear.u == 0.0 && sampled.u <= 1e-12 * linear.value.abs();
+    let difference = (linear.low() - sampled.low).abs().max((linear.high() - sampled.high).abs());
+    let allowed = tolerance(sampled.u, scale) + 2.0 * sampled.errors[2].max(sampled.errors[3]);
+    let basis = match () {
+        () if sure => Basis::Exact,
+        () if difference <= allowed => Basis::Linear,
+        () => Basis::MonteCarlo,
+    };
+    let (value, u, low, high) = match basis {
+        Basis::MonteCarlo => (sampled.value, sampled.u, sampled.low, sampled.high),
+        Basis::Exact => (linear.value, 0.0, linear.value, linear.value),
+        Basis::Linear => (linear.value, linear.u, linear.low(), linear.high()),
+    };
+    Band { value, u, low, high, basis, linear, sampled, difference: (difference, allowed) }
+}
+
+/// Half a unit of the first digit of u, in SI.
+fn tolerance(u: f64, scale: f64) -> f64 {
+    decimals_for(u / scale).map_or(0.0, |two| 0.5 * libm::pow(10.0, f64::from(1 - two)) * scale)
+}

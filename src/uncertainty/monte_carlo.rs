@@ -1,0 +1,202 @@
+//! Monte Carlo propagation of distributions, in blocks until stable.
+//!
+//! Source: JCGM 101, 7.9 (adaptive procedure). One deviation: the estimates
+//! are means over blocks of 10 000 trials, as the procedure's own stability
+//! test takes them, instead of being taken once more from all trials at the
+//! end. That keeps memory constant; the bias of a block's quantile is of the
+//! order of u/10 000.
+
+use super::tally::{Tally, tally};
+use crate::method::WIDTH;
+use crate::plan::{Block, Plan, SlotId};
+use crate::stats::{Generator, Ziggurat};
+use crate::units::{Kind, decimals_for};
+use rayon::prelude::*;
+
+/// Trials in one block (JCGM 101, 7.9.4: at least 10 000).
+pub const BLOCK: usize = 10_000;
+/// Fewest blocks: 10⁴/(1 − p) trials for p = 0.95 (JCGM 101, 7.2.2, note 1).
+const FEWEST: usize = 20;
+/// Most blocks that the adaptive procedure takes.
+const MOST: usize = 400;
+/// Blocks between two looks at the stability.
+const STEP: usize = 20;
+
+/// How many trials to make.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Trials {
+    /// Until every printed digit is stable, at most four million.
+    UntilStable,
+    /// This many, rounded up to whole blocks.
+    Fixed(u64),
+}
+
+/// One result's distribution.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Sampled {
+    /// Mean.
+    pub value: f64,
+    /// Standard deviation.
+    pub u: f64,
+    /// Lower end of the probabilistically symmetric 95 % interval.
+    pub low: f64,
+    /// Upper end.
+    pub high: f64,
+    /// Ends of the shortest 95 % interval.
+    pub shortest: (f64, f64),
+    /// Standard errors of value, u, low and high.
+    pub errors: [f64; 4],
+}
+
+/// All results' distributions.
+#[derive(Debug, Clone)]
+pub struct Sampling {
+    /// Trials made.
+    pub trials: u64,
+    /// Trials that were physically impossible; the rest count.
+    pub impossible: u64,
+    /// Whether every printed digit is stable.
+    pub stable: bool,
+    /// The results, in the order asked for; `None` where too few trials were
+    /// possible.
+    pub results: Vec<Option<Sampled>>,
+}
+
+/// One block's estimates of all results.
+struct BlockTally {
+    impossible: u64,
+    results: Vec<Option<Tally>>,
+}
+
+/// Draws and evaluates until the wanted slots are known to `trials`' demand.
+/// `scales` are the reader's units of the slots (SI per unit), to which the
+/// stability of printed digits refers. `centres` are the values at the best
+/// estimates; angles are counted from there, so that none is cut at ±180°.
+pub fn sample(
+    plan: &Plan,
+    wanted: &[SlotId],
+    centres: &[f64],
+    scales: &[f64],
+    seed: u64,
+    trials: Trials,
+) -> Sampling {
+    let ziggurat = Ziggurat::default();
+    let run = |first: usize, count: usize| -> Vec<BlockTally> {
+        (first..first + count)
+            .into_par_iter()
+            .map_init(
+                || Workspace::new(plan, wanted),
+                |w, block| w.run(plan, wanted, centres, seed, block, &ziggurat),
+            )
+            .collect()
+    };
+    let mut blocks = Vec::new();
+    loop {
+        let count = match trials {
+            Trials::Fixed(n) => {
+                usize::try_from(n.div_ceil(BLOCK as u64)).unwrap_or(usize::MAX).clamp(1, 100_000)
+            }
+            Trials::UntilStable if blocks.is_empty() => FEWEST,
+            Trials::UntilStable => STEP,
+        };
+        blocks.extend(run(blocks.len(), count));
+        let sampling = summed(&blocks, scales);
+        let enough = matches!(trials, Trials::Fixed(_)) || blocks.len() >= MOST;
+        if enough || sampling.stable {
+            return sampling;
+        }
+    }
+}
+
+/// Columns that one thread reuses.
+struct Workspace {
+    block: Block,
+    columns: Vec<Vec<f64>>,
+}
+
+impl Workspace {
+    fn new(plan: &Plan, wanted: &[SlotId]) -> Self {
+        Workspace { block: Block::new(plan, wanted), columns: vec![Vec::with_capacity(BLOCK); wanted.len()] }
+    }
+
+    fn run(
+        &mut self,
+        plan: &Plan,
+        wanted: &[SlotId],
+        centres: &[f64],
+        seed: u64,
+        block: usize,
+        ziggurat: &Ziggurat,
+    ) -> BlockTally {
+        let mut rng = Generator::new(seed, block as u64);
+        self.columns.iter_mut().for_each(Vec::clear);
+        let mut impossible = 0;
+        for _ in 0..BLOCK / WIDTH {
+            self.block.draw(plan, ziggurat, &mut rng);
+            self.block.compute(plan);
+            let possible = self.block.possible();
+            impossible += possible.iter().filter(|p| !**p).count() as u64;
+            for (column, slot) in self.columns.iter_mut().zip(wanted) {
+                let trials = self.block.trials(*slot).iter().zip(possible);
+                column.extend(trials.filter(|(_, p)| **p).map(|(v, _)| *v));
+            }
+        }
+        for ((column, slot), centre) in self.columns.iter_mut().zip(wanted).zip(centres) {
+            if plan.slot(*slot).kind == Kind::Angle {
+                column.iter_mut().for_each(|v| *v = near(*v, *centre));
+            }
+        }
+        BlockTally { impossible, results: self.columns.iter_mut().map(|c| tally(c)).collect() }
+    }
+}
+
+/// The same direction, at most half a turn from `centre`.
+fn near(angle: f64, centre: f64) -> f64 {
+    let turns = (angle - centre) / std::f64::consts::TAU;
+    angle - libm::round(turns) * std::f64::consts::TAU
+}
+
+/// Joins the blocks in the order of their numbers.
+fn summed(blocks: &[BlockTally], scales: &[f64]) -> Sampling {
+    let impossible = blocks.iter().map(|b| b.impossible).sum();
+    let mut stable = true;
+    let results = (0..scales.len())
+        .map(|i| {
+            let tallies: Option<Vec<Tally>> =
+                blocks.iter().map(|b| b.results.get(i).copied().flatten()).collect();
+            let sampled = join(&tallies?);
+            stable &= is_stable(&sampled, scales[i]);
+            Some(sampled)
+        })
+        .collect();
+    Sampling { trials: (blocks.len() * BLOCK) as u64, impossible, stable, results }
+}
+
+fn join(tallies: &[Tally]) -> Sampled {
+    let (value, value_error) = mean_and_error(tallies, |t| t.mean);
+    let (variance, variance_error) = mean_and_error(tallies, |t| t.variance);
+    let (low, low_error) = mean_and_error(tallies, |t| t.low);
+    let (high, high_error) = mean_and_error(tallies, |t| t.high);
+    let (short_low, _) = mean_and_error(tallies, |t| t.short_low);
+    let (short_high, _) = mean_and_error(tallies, |t| t.short_high);
+    let u = variance.max(0.0).sqrt();
+    let u_error = if u > 0.0 { variance_error / (2.0 * u) } else { 0.0 };
+    let errors = [value_error, u_error, low_error, high_error];
+    Sampled { value, u, low, high, shortest: (short_low, short_high), errors }
+}
+
+/// Mean over blocks and its standard error (7.9.4, steps f and g).
+fn mean_and_error(tallies: &[Tally], of: impl Fn(&Tally) -> f64) -> (f64, f64) {
+    let h = tallies.len() as f64;
+    let mean = tallies.iter().map(&of).sum::<f64>() / h;
+    let squares: f64 = tallies.iter().map(|t| (of(t) - mean) * (of(t) - mean)).sum();
+    (mean, (squares / (h * (h - 1.0).max(1.0))).sqrt())
+}
+
+/// Twice the standard error lies within half a unit of the last printed digit
+/// (7.9.2 and 7.9.4, step i).
+fn is_stable(s: &Sampled, scale: f64) -> bool {
+    let Some(decimals) = decimals_for(s.u / scale) else { return true };
+    let half_unit = 0.5 * libm::pow(10.0, f64::from(-decimals)) * scale;
+    s.errors.iter().all(|e| 2.0 * e < half_unit)
+}
