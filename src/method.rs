@@ -6,6 +6,7 @@
 //! formula's text: text comes from running the function at a tracing scalar.
 
 use crate::scalar::{Arena, Dual, Expression, Lane, Real};
+use crate::stats::Dist;
 use crate::units::Kind;
 use std::array::from_fn;
 use std::marker::PhantomData;
@@ -230,10 +231,8 @@ pub struct MethodError {
     pub id: &'static str,
     /// What it stands for.
     pub title: &'static str,
-    /// Best estimate, SI.
-    pub estimate: f64,
-    /// Standard uncertainty, SI.
-    pub u: f64,
+    /// What is known about it, SI.
+    pub dist: Dist,
     /// Its kind.
     pub kind: Kind,
     /// Where the figure comes from.

@@ -12,9 +12,10 @@ pub(super) fn run(args: &SolveArgs) -> u8 {
         put("\n");
         return outcome.status();
     }
-    show_notices(&outcome);
-    if let Some(document) = compose(&outcome) {
-        put(&terminal::render(&document, styled(std::io::stdout().is_terminal())));
+    // The worksheet holds the notices; without one they are all there is.
+    match compose(&outcome) {
+        Some(document) => put(&terminal::render(&document, styled(std::io::stdout().is_terminal()))),
+        None => show_notices(&outcome),
     }
     outcome.status()
 }

@@ -2,6 +2,7 @@
 
 use crate::formula;
 use crate::method::{Limit, Method, MethodError, Node};
+use crate::stats::Dist;
 
 /// The method's card.
 pub const METHOD: Method = Method {
@@ -18,8 +19,7 @@ pub const METHOD: Method = Method {
 pub const SKID_ERROR: MethodError = MethodError {
     id: "skid",
     title: "locked-wheel skid on a surface's mean friction: this vehicle against the mean",
-    estimate: 1.0,
-    u: 0.05,
+    dist: Dist::Normal { mean: 1.0, sd: 0.05 },
     kind: crate::units::Kind::Ratio,
     source: "±5 % of speed at 95 %, instrumented skids: Lambourn, Int. Crim. Police Rev. 325 (1979), as quoted",
 };
@@ -28,8 +28,7 @@ pub const SKID_ERROR: MethodError = MethodError {
 pub const TRAVEL_ERROR: MethodError = MethodError {
     id: "post_impact_drag",
     title: "drag of a struck vehicle on its way to rest (wheels, scraping, rotation)",
-    estimate: 1.0,
-    u: 0.10,
+    dist: Dist::Normal { mean: 1.0, sd: 0.10 },
     kind: crate::units::Kind::Ratio,
     source: "common practice; the program's starting value",
 };

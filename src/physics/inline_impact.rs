@@ -5,6 +5,7 @@
 
 use crate::formula;
 use crate::method::{Limit, Method, MethodError, Node};
+use crate::stats::Dist;
 use crate::units::Kind;
 
 /// The method's card.
@@ -24,8 +25,7 @@ pub const METHOD: Method = Method {
 pub const RECORDER_ERROR: MethodError = MethodError {
     id: "recorded_delta_v",
     title: "recorded delta-V against the vehicle's true one",
-    estimate: 1.0,
-    u: 0.05,
+    dist: Dist::Normal { mean: 1.0, sd: 0.05 },
     kind: Kind::Ratio,
     source: "mean error just under 6 % where the pulse was fully recorded: Niehoff et al., ESV 2005 (abstract)",
 };

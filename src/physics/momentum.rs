@@ -6,6 +6,7 @@
 
 use crate::formula;
 use crate::method::{Limit, Method, MethodError, Node};
+use crate::stats::Dist;
 use crate::units::Kind;
 
 /// The method's card.
@@ -25,8 +26,8 @@ pub const METHOD: Method = Method {
 pub const ROAD_TIME: MethodError = MethodError {
     id: "contact_time",
     title: "duration of contact, while the tyres keep pushing",
-    estimate: 0.10,
-    u: 0.04,
+    // As a rectangle the standard deviation is 0.04 s and zero is out of reach.
+    dist: Dist::Rectangular { lo: 0.03, hi: 0.17 },
     kind: Kind::Time,
     source: "contacts last 55 to 160 ms in crashes simulated in a general rigid-body library; starting value",
 };
@@ -35,8 +36,7 @@ pub const ROAD_TIME: MethodError = MethodError {
 pub const ROAD_SHARE: MethodError = MethodError {
     id: "road_impulse",
     title: "road's impulse during contact, in units of ½ μ g τ",
-    estimate: 0.0,
-    u: 1.0,
+    dist: Dist::Normal { mean: 0.0, sd: 1.0 },
     kind: Kind::Ratio,
     source: "the tyres can push with at most μ g for the time of contact; half of it as one standard deviation",
 };

@@ -116,7 +116,7 @@ impl<'a> Backward<'a> {
     }
 
     fn after_impact(&mut self, unit: &Unit, phase: &Phase) -> Option<SlotId> {
-        self.b.section(format!("{}: from impact to rest", unit.label));
+        self.b.section(format!("{}: from impact to rest", title(unit)));
         let speed = match &phase.speed {
             Some(entry) => self.b.entry(format!("v′_{{{}}}", unit.id), entry, Role::Measured),
             None if phase.travel.is_empty() => return None,
@@ -131,7 +131,7 @@ impl<'a> Backward<'a> {
     }
 
     fn alone(&mut self, unit: &Unit, phase: &Phase) {
-        self.b.section(format!("{}: braking to rest", unit.label));
+        self.b.section(format!("{}: braking to rest", title(unit)));
         if let Some(speed) = travel::chain(self, unit, phase, None) {
             self.b.result_with(
                 format!("{}.speed_at_start_of_marks", unit.id),
@@ -145,7 +145,7 @@ impl<'a> Backward<'a> {
     /// Speed at the start of the marks before impact, from the impact speed.
     pub(super) fn marks_before(&mut self, unit: &Unit, impact_speed: SlotId) {
         let Some(phase) = before(unit).filter(|p| !p.travel.is_empty()) else { return };
-        self.b.section(format!("{}: marks before impact", unit.label));
+        self.b.section(format!("{}: marks before impact", title(unit)));
         if let Some(speed) = travel::chain(self, unit, phase, Some(impact_speed)) {
             self.b.result_with(
                 format!("{}.speed_at_start_of_marks", unit.id),
@@ -243,6 +243,15 @@ impl<'a> Backward<'a> {
     /// Reports that an impact lacks something.
     pub(super) fn lacks(&mut self, what: String, place: crate::diag::Place, hint: &str) {
         self.notices.push(Notice::stop("P-2", what).at(place).expected("what this impact needs").hint(hint));
+    }
+}
+
+/// The unit's name, and what it is if that says more.
+fn title(unit: &Unit) -> String {
+    if unit.label == unit.id {
+        format!("Unit {}", unit.id)
+    } else {
+        format!("Unit {}, {}", unit.id, unit.label)
     }
 }
 

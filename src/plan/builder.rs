@@ -62,11 +62,14 @@ impl Builder {
 
     /// Adds a method error with the program's own value.
     pub fn method_error(&mut self, symbol: String, error: &MethodError, whose: &str) -> SlotId {
-        let bounds =
-            if error.estimate > 0.0 { (0.0, f64::INFINITY) } else { (f64::NEG_INFINITY, f64::INFINITY) };
+        let bounds = if error.dist.estimate() > 0.0 {
+            (0.0, f64::INFINITY)
+        } else {
+            (f64::NEG_INFINITY, f64::INFINITY)
+        };
         let input = Input {
             slot: SlotId(0),
-            dist: Dist::Normal { mean: error.estimate, sd: error.u },
+            dist: error.dist,
             role: Role::MethodError,
             bounds,
             name: format!("method error: {}{whose}", error.title),

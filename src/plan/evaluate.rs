@@ -91,6 +91,20 @@ impl Plan {
         }
     }
 
+    /// Derivatives of one slot by every slot before it, each taken as if it
+    /// were free: what a degree of a computed direction is worth.
+    pub fn adjoint(&self, e: &Evaluation, slot: SlotId) -> Vec<f64> {
+        let mut by = vec![0.0; self.slots.len()];
+        by[slot.0] = 1.0;
+        for (call, local) in self.calls.iter().zip(&e.local).rev() {
+            let outer = by[call.out.0];
+            if outer != 0.0 {
+                call.ins.iter().zip(local).for_each(|(s, slope)| by[s.0] += outer * slope);
+            }
+        }
+        by
+    }
+
     /// The call that gives a slot, if one does.
     pub fn call_of(&self, slot: SlotId) -> Option<usize> {
         match self.slot(slot).origin {

@@ -39,9 +39,12 @@ pub(super) fn plan(w: &mut Backward<'_>, impact: &Impact, separation: &[Option<S
         party(w, unit, id, speed, impact.place)
     });
     let [Some(a), Some(b)] = parties else { return };
+    w.b.section("Method error: what the road may have pushed during contact");
+    let road = [("x", "eastward"), ("y", "northward")]
+        .map(|(axis, along)| [&a, &b].map(|p| road_impulse(w, p.unit, axis, along)));
     w.b.section("Impact: momentum");
     let xy = [&a, &b].map(|p| components(w, p.after, p.course, &p.unit.id, "′", "after impact"));
-    let sums = momentum_sums(w, &a, &b, xy, impact.place);
+    let sums = momentum_sums(w, &a, &b, xy, road, impact.place);
     let Some((before, condition)) = speeds(w, &a, &b, sums, impact.place) else { return };
     outcome(w, [&a, &b], before, condition, xy, impact.place);
     for (party, speed) in [(&a, before[0]), (&b, before[1])] {
@@ -209,12 +212,11 @@ fn momentum_sums(
     a: &Party<'_>,
     b: &Party<'_>,
     xy: [[SlotId; 2]; 2],
+    road: [[SlotId; 2]; 2],
     place: Place,
 ) -> [SlotId; 2] {
     [("x", "east", 0), ("y", "north", 1)].map(|(axis, along, i)| {
-        let words = format!("{along}ward");
-        let da = road_impulse(w, a.unit, axis, &words);
-        let db = road_impulse(w, b.unit, axis, &words);
+        let [da, db] = road[i];
         w.b.call(
             momentum::MomentumSum::NODE,
             &[a.mass, xy[0][i], da, b.mass, xy[1][i], db],

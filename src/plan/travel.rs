@@ -109,7 +109,8 @@ fn along_path(
             None => piece,
             Some(so_far) => {
                 let sum = if i + 1 == pieces { symbol.to_string() } else { format!("{symbol}*") };
-                let title = format!("Length so far: {}", names.words);
+                let what = if i + 1 == pieces { "Length of the path" } else { "Length so far" };
+                let title = format!("{what}: {}", names.words);
                 w.b.call(path::LongerPath::NODE, &[so_far, piece], sum, title, Some(phase.place))
             }
         });

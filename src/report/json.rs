@@ -7,6 +7,7 @@
 use super::caution;
 use crate::analysis::Outcome;
 use crate::uncertainty::Basis;
+use crate::units::clock;
 use serde::Serialize;
 use std::collections::BTreeMap;
 
@@ -36,7 +37,7 @@ struct Exported<'a> {
     coverage: f64,
     method: Basis,
     #[serde(skip_serializing_if = "Option::is_none")]
-    remark: Option<&'static str>,
+    remark: Option<String>,
 }
 
 #[derive(Serialize)]
@@ -84,7 +85,11 @@ fn exported<'a>(outcome: &'a Outcome, r: &'a crate::analysis::Answered) -> Expor
         high: r.band.high,
         coverage: 0.95,
         method: r.band.basis,
-        remark: r.named.remark,
+        remark: if r.named.id.ends_with(".pdof") {
+            Some(clock(r.band.value))
+        } else {
+            r.named.remark.map(Into::into)
+        },
     }
 }
 

@@ -90,8 +90,9 @@ fn substituted(plan: &Plan, e: &Evaluation, index: usize, call: &Call, i: usize,
     let guard = guard_decimals(places, slope, ROUNDING_BUDGET / call.ins.len() as f64);
     let short = exact_decimals(value / scale);
     let exact = plan.input_of(slot).is_some_and(|input| input.dist.is_exact()) && short < 6;
-    // Three figures at least, so that a number without effect is still seen.
-    let figures = decimals_for(value.abs() / (10.0 * scale)).unwrap_or(0);
+    // Three figures, so that a number without effect is still seen; but what is
+    // a rounding error beside the result stays a zero.
+    let figures = decimals_for(value.abs() / (10.0 * scale)).unwrap_or(0).min(guard.max(places) + 2);
     si(kind, value, if exact { short } else { guard.max(figures) })
 }
 

@@ -14,8 +14,7 @@ pub(super) fn section(analysis: &Analysis) -> Vec<Block> {
         Block::Heading { level: 1, text: "Uncertainty budget".into() },
         Block::Paragraph(
             "By linear propagation with exact derivatives (JCGM 100). The bounding case adds up every entry at its \
-             worst at once, limits or 95 %; it is not a 95 % band. Every direction of the momentum solution is listed, \
-             however little it weighs."
+             worst at once, limits or 95 %; it is not a 95 % band."
                 .into(),
         ),
     ];
@@ -26,7 +25,35 @@ pub(super) fn section(analysis: &Analysis) -> Vec<Block> {
             blocks.push(Block::Paragraph(summary(analysis, answered)));
         }
     }
+    blocks.extend(per_degree(analysis));
     blocks
+}
+
+/// What a degree of every direction is worth, whether measured or computed.
+fn per_degree(analysis: &Analysis) -> Vec<Block> {
+    let Some(impact) = &analysis.plan.watch.momentum else { return Vec::new() };
+    let directions: Vec<_> = impact.approach.iter().flatten().chain(&impact.course).copied().collect();
+    let (unit, scale) = analysis.case.identity.system.unit(Kind::Speed);
+    let degree = analysis.case.identity.system.unit(Kind::Angle).1;
+    let rows: Vec<Vec<String>> = analysis
+        .results
+        .iter()
+        .filter(|r| r.named.id.ends_with(".impact_speed"))
+        .map(|r| {
+            let by = analysis.plan.adjoint(&analysis.evaluation, r.named.slot);
+            let cells = directions.iter().map(|d| significant(by[d.0] * degree / scale, 2));
+            std::iter::once(r.named.label.clone()).chain(cells).collect()
+        })
+        .collect();
+    if rows.is_empty() {
+        return Vec::new();
+    }
+    let mut columns = vec![Column::words(&format!("{unit} per degree of"), 2.0)];
+    columns.extend(directions.iter().map(|d| Column::numbers(&analysis.plan.slot(*d).symbol, 1.0)));
+    vec![
+        Block::Heading { level: 2, text: "What a degree of each direction is worth".into() },
+        Block::Table(Table { columns, rows }),
+    ]
 }
 
 fn table(analysis: &Analysis, answered: &Answered) -> Table {
@@ -66,8 +93,14 @@ fn row(analysis: &Analysis, share: &Share, unit: &str, scale: f64) -> Vec<String
     vec![
         slot.symbol.clone(),
         format!("{} (entry {})", input.name, share.input + 1),
-        format!("{} {own_unit}", significant(input.dist.u() / own_scale, 2)).trim_end().to_string(),
-        format!("{} {unit} per {per}", significant(worth, 2)),
+        format!(
+            "{}{}{own_unit}",
+            significant(input.dist.u() / own_scale, 2),
+            if own_unit == "°" { "" } else { " " }
+        )
+        .trim_end()
+        .to_string(),
+        format!("{}{}{unit} per {per}", significant(worth, 2), if unit == "°" { "" } else { " " }),
         significant(share.part.abs() / scale, 2),
         format!("{}\u{a0}%", fixed(share.of_variance * 100.0, 1)),
     ]

@@ -17,12 +17,12 @@ use crate::analysis::{Analysis, Outcome};
 pub fn compose(outcome: &Outcome) -> Option<Document> {
     let analysis = outcome.analysis.as_ref()?;
     let id = &analysis.case.identity;
-    let mut blocks = identity(outcome, analysis);
+    let mut blocks = identity(analysis);
     blocks.push(Block::Boxed {
         title: "Caution".into(),
         paragraphs: caution::FULL.iter().map(|p| (*p).to_string()).collect(),
     });
-    blocks.extend(results::section(analysis));
+    blocks.extend(results::section(outcome, analysis));
     blocks.extend(diagram::section(analysis));
     blocks.extend(notices::section(outcome));
     blocks.extend(register::section(analysis));
@@ -38,7 +38,7 @@ pub fn compose(outcome: &Outcome) -> Option<Document> {
 }
 
 /// Who asked, who prepared, what was reconstructed.
-fn identity(outcome: &Outcome, analysis: &Analysis) -> Vec<Block> {
+fn identity(analysis: &Analysis) -> Vec<Block> {
     let id = &analysis.case.identity;
     let mut lines = Vec::new();
     let mut say = |label: &str, text: &Option<String>| {
@@ -54,12 +54,6 @@ fn identity(outcome: &Outcome, analysis: &Analysis) -> Vec<Block> {
     }
     for remark in &id.remarks {
         lines.push(Block::Paragraph(format!("Remark: {remark}")));
-    }
-    if outcome.status() == 2 {
-        lines.push(Block::Paragraph(
-            "Part of this case was refused: see the refused results and the notices with their reasons."
-                .into(),
-        ));
     }
     lines
 }

@@ -8,7 +8,7 @@ pub(super) fn section(analysis: &Analysis) -> Vec<Block> {
     let mut blocks = vec![
         Block::Heading { level: 1, text: "Register of entries".into() },
         Block::Paragraph(
-            "Each measured quantity stands here once, however often it is used; what is used twice is one variable. \
+            "Each quantity that enters stands here once, as 'entry' and its number, however often it is used; what is used twice is one variable. \
              Values are in SI units with their standard uncertainty u; angles count anticlockwise from east (ISO \
              8855); grades are rise over run, + uphill in the direction of travel."
                 .into(),
@@ -45,8 +45,8 @@ pub(super) fn section(analysis: &Analysis) -> Vec<Block> {
 
 fn columns() -> Vec<Column> {
     vec![
-        Column::numbers("Entry", 0.55),
-        Column::words("Symbol", 0.75),
+        Column::numbers("No.", 0.5),
+        Column::words("Symbol", 0.95),
         Column::words("Quantity", 2.2),
         Column::words("As entered", 1.7),
         Column::numbers("SI", 1.0),

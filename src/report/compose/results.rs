@@ -1,12 +1,14 @@
 //! Results with their bands and what drives them.
 
-use crate::analysis::{Analysis, Answered};
+use crate::analysis::{Analysis, Answered, Outcome};
+use crate::diag::Severity;
 use crate::report::document::{Block, Column, Table};
 use crate::uncertainty::{Band, Basis};
 use crate::units::{Kind, System, clock, compass, decimals_for, fixed, significant};
 
-pub(super) fn section(analysis: &Analysis) -> Vec<Block> {
+pub(super) fn section(outcome: &Outcome, analysis: &Analysis) -> Vec<Block> {
     let mut blocks = vec![Block::Heading { level: 1, text: "Results".into() }];
+    blocks.extend(open_questions(outcome));
     if analysis.results.is_empty() {
         blocks.push(Block::Paragraph("No result stands.".into()));
     } else {
@@ -23,6 +25,23 @@ pub(super) fn section(analysis: &Analysis) -> Vec<Block> {
     blocks
 }
 
+/// What must be known before a result is read.
+fn open_questions(outcome: &Outcome) -> Option<Block> {
+    let codes = |wanted: &dyn Fn(&crate::diag::Notice) -> bool| -> Vec<&str> {
+        outcome.notices.iter().filter(|n| wanted(n)).map(|n| n.code).collect()
+    };
+    let stops = codes(&|n| n.severity == Severity::Stop);
+    let open = codes(&crate::diag::Notice::is_open_warning);
+    let mut parts = Vec::new();
+    if !stops.is_empty() {
+        parts.push(format!("Part of this case was refused: {}.", stops.join(", ")));
+    }
+    if !open.is_empty() {
+        parts.push(format!("Warnings that nobody has answered: {}.", open.join(", ")));
+    }
+    (!parts.is_empty()).then(|| Block::Paragraph(format!("{} See Notices.", parts.join(" "))))
+}
+
 fn table(analysis: &Analysis) -> Table {
     let system = analysis.case.identity.system;
     let rows = analysis
@@ -32,7 +51,7 @@ fn table(analysis: &Analysis) -> Table {
             let kind = analysis.plan.slot(a.named.slot).kind;
             let text = BandText::new(&a.band, kind, system);
             vec![
-                a.named.label.clone(),
+                label(a),
                 text.value,
                 format!("{} to {}", text.low, text.high),
                 text.u,
@@ -51,6 +70,16 @@ fn table(analysis: &Analysis) -> Table {
             Column::numbers("Line", 0.6),
         ],
         rows,
+    }
+}
+
+/// A direction of force always goes with words: a mistaken sign of 30° is a
+/// mistake of 60°.
+fn label(a: &Answered) -> String {
+    if a.named.id.ends_with(".pdof") {
+        format!("{}: {}", a.named.label, clock(a.band.value))
+    } else {
+        a.named.label.clone()
     }
 }
 
@@ -122,17 +151,9 @@ fn reading(analysis: &Analysis) -> String {
     )
 }
 
-/// Directions of force by the clock and courses by the compass: a mistaken
-/// sign is easier to see in words.
+/// Courses by the compass: a mistaken direction is easier to see in words.
 fn directions(analysis: &Analysis) -> Vec<Block> {
     let mut blocks = Vec::new();
-    for a in analysis.results.iter().filter(|a| a.named.id.ends_with(".pdof")) {
-        blocks.push(Block::Paragraph(format!(
-            "{}: the force came from {}.",
-            a.named.label,
-            clock(a.band.value)
-        )));
-    }
     if let Some(impact) = &analysis.plan.watch.momentum {
         for i in [0, 1] {
             let word = |slot| analysis.evaluation.value(slot).map(compass);
