@@ -122,10 +122,21 @@ fn evaluate(case: Case, plan: Plan, options: Options) -> (Analysis, Vec<Notice>)
     for (index, band) in standing.iter().zip(bands(propagated, &sampling, &scales)) {
         all[*index] = band;
     }
-    let facts = Facts { case: &case, plan: &plan, evaluation: &evaluation, bands: &all, sampling: &sampling };
+    let facts = Facts {
+        case: &case,
+        plan: &plan,
+        evaluation: &evaluation,
+        bands: &all,
+        sampling: &sampling,
+        trials: options.trials,
+    };
     let findings = apply(&facts);
     let (kept, refused) = withhold(&plan, &evaluation, &all, &findings);
-    let numbering = Numbering::new(&plan, &kept.iter().map(|(n, _)| n.slot).collect::<Vec<_>>());
+    let mut shown: Vec<SlotId> = kept.iter().map(|(n, _)| n.slot).collect();
+    if !findings.iter().any(|f| f.withheld != Withheld::Nothing) {
+        shown.extend(plan.checks());
+    }
+    let numbering = Numbering::new(&plan, &shown);
     let u: Vec<f64> = (0..plan.slots.len()).map(|s| slot_u(&plan, &evaluation, SlotId(s))).collect();
     let lines = lines(&plan, &evaluation, &u, &numbering, case.identity.system);
     let results = kept

@@ -6,11 +6,8 @@ use crate::analysis::Options;
 use crate::diag::Severity;
 use crate::uncertainty::Trials;
 
-/// Trials that tell whether the entries reach into the impossible.
-const A_LOOK: Trials = Trials::Fixed(10_000);
-
 pub(super) fn run(args: &CheckArgs) -> u8 {
-    let options = Options { trials: A_LOOK, ..Options::default() };
+    let options = Options { trials: Trials::Look, ..Options::default() };
     let Some(outcome) = load(&args.case, options) else { return 2 };
     show_notices(&outcome);
     let count =

@@ -8,6 +8,7 @@ use super::{Role, SlotId};
 use crate::case::{Direction, Entry, Impact, Phase, Unit};
 use crate::diag::{Notice, Place};
 use crate::physics::inline_impact as line;
+use crate::physics::momentum::VelocityChange;
 use crate::units::Kind;
 
 /// One unit in the impact.
@@ -254,39 +255,39 @@ fn outcome(
         );
     }
     w.b.section("Impact: what it did to the units");
-    for i in [0, 1] {
-        let id = &parties[i].unit.id;
-        let title = format!("Delta-V of {id}, signed along the line");
-        let delta = w.b.call(
-            crate::physics::momentum::VelocityChange::NODE,
-            &[after[i], before[i]],
-            format!("ΔV_{{{id}}}"),
-            title,
-            Some(place),
-        );
-        w.b.result(format!("{id}.delta_v"), format!("Delta-V of {id} (+ along the line)"), delta);
+    // The first unit is pushed back and the second forward: both sizes are +.
+    let changes = [(before[0], after[0], "against the line"), (after[1], before[1], "along the line")];
+    for (p, (larger, smaller, sense)) in parties.iter().zip(changes) {
+        let id = &p.unit.id;
+        let title = format!("Delta-V of {id}, {sense}");
+        let ins = [larger, smaller];
+        let delta = w.b.call(VelocityChange::NODE, &ins, format!("ΔV_{{{id}}}"), title.clone(), Some(place));
+        w.b.result(format!("{id}.delta_v"), title, delta);
     }
-    let [v1, v2] = before;
-    let closing = w.b.call(
-        line::ClosingInLine::NODE,
-        &[v1, v2],
-        "V_{c}*",
-        "Closing speed of both velocities",
-        Some(place),
-    );
-    if !w.b.plan.results.iter().any(|r| r.id == "closing_speed") {
-        w.b.result("closing_speed", "Closing speed", closing);
-    }
-    let ins = [v1, v2, after[0], after[1]];
-    let e = w.b.call(line::Restitution::NODE, &ins, "e_{i}", "Restitution implied", Some(place));
-    w.b.result("restitution", "Restitution implied", e);
-    let ins = [m1, m2, e, closing];
-    let energy =
-        w.b.call(line::AbsorbedEnergy::NODE, &ins, "E_{lost}", "Energy lost in the impact", Some(place));
-    w.b.result("energy_lost", "Energy lost in the impact", energy);
+    losses(w, [m1, m2], before, after, place);
     for i in [0, 1] {
         w.marks_before(parties[i].unit, speeds[i]);
     }
+}
+
+/// Closing speed, restitution and energy from all four velocities.
+fn losses(
+    w: &mut Backward<'_>,
+    [m1, m2]: [SlotId; 2],
+    [v1, v2]: [SlotId; 2],
+    [w1, w2]: [SlotId; 2],
+    place: Place,
+) {
+    let title = "Closing speed of both velocities";
+    let closing = w.b.call(line::ClosingInLine::NODE, &[v1, v2], "V_{c}*", title, Some(place));
+    if !w.b.plan.results.iter().any(|r| r.id == "closing_speed") {
+        w.b.result("closing_speed", "Closing speed", closing);
+    }
+    let e = w.b.call(line::Restitution::NODE, &[v1, v2, w1, w2], "e_{i}", "Restitution implied", Some(place));
+    w.b.result("restitution", "Restitution implied", e);
+    let title = "Energy lost in the impact";
+    let energy = w.b.call(line::AbsorbedEnergy::NODE, &[m1, m2, e, closing], "E_{lost}", title, Some(place));
+    w.b.result("energy_lost", title, energy);
 }
 
 /// Closing speed along the line from both delta-Vs and restitution.

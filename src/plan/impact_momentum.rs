@@ -4,6 +4,7 @@ use super::backward::{Backward, after, before};
 use super::{Departure, MomentumSlots, Role, SlotId, travel};
 use crate::case::{Direction, Impact, Phase, Unit};
 use crate::diag::{Notice, Place};
+use crate::method::Node;
 use crate::physics::{momentum, path};
 use crate::units::Kind;
 
@@ -233,64 +234,73 @@ fn speeds(
     w: &mut Backward<'_>,
     a: &Party<'_>,
     b: &Party<'_>,
-    [px, py]: [SlotId; 2],
+    p: [SlotId; 2],
     place: Place,
 ) -> Option<([SlotId; 2], Option<SlotId>)> {
-    let symbol = |p: &Party<'_>| format!("v_{{{}}}", p.unit.id);
-    let title = |p: &Party<'_>| format!("Speed of {} before impact", p.unit.id);
     match (&a.approach, &b.approach) {
         (Approach::Course(own), Approach::Course(other)) => {
-            let k = w.b.call(
-                momentum::Condition::NODE,
-                &[*own, *other],
-                "K",
-                "Condition of the momentum solution",
-                Some(place),
-            );
-            let va = w.b.call(
+            let title = "Condition of the momentum solution";
+            let k = w.b.call(momentum::Condition::NODE, &[*own, *other], "K", title, Some(place));
+            let va = unknown_speed(
+                w,
+                a,
                 momentum::ApproachSpeed::NODE,
-                &[px, py, a.mass, *own, *other],
-                symbol(a),
-                title(a),
-                Some(place),
+                &[p[0], p[1], a.mass, *own, *other],
+                place,
             );
-            let vb = w.b.call(
+            let vb = unknown_speed(
+                w,
+                b,
                 momentum::ApproachSpeed::NODE,
-                &[px, py, b.mass, *other, *own],
-                symbol(b),
-                title(b),
-                Some(place),
+                &[p[0], p[1], b.mass, *other, *own],
+                place,
             );
             Some(([va, vb], Some(k)))
         }
         (Approach::Course(own), Approach::Stood { speed }) => {
-            Some(([standing_partner(w, a, *own, [px, py], place), *speed], None))
+            Some(([standing_partner(w, a, *own, p, place), *speed], None))
         }
         (Approach::Stood { speed }, Approach::Course(own)) => {
-            Some(([*speed, standing_partner(w, b, *own, [px, py], place)], None))
+            Some(([*speed, standing_partner(w, b, *own, p, place)], None))
         }
         (Approach::Course(own), Approach::Known { course, speed }) => {
-            let ins = [px, py, a.mass, *own, b.mass, *speed, *course];
-            let va =
-                w.b.call(momentum::ApproachSpeedKnownPartner::NODE, &ins, symbol(a), title(a), Some(place));
-            Some(([va, *speed], None))
+            Some(([known_partner(w, [a, b], *own, (*speed, *course), p, place), *speed], None))
         }
         (Approach::Known { course, speed }, Approach::Course(own)) => {
-            let ins = [px, py, b.mass, *own, a.mass, *speed, *course];
-            let vb =
-                w.b.call(momentum::ApproachSpeedKnownPartner::NODE, &ins, symbol(b), title(b), Some(place));
-            Some(([*speed, vb], None))
+            Some(([*speed, known_partner(w, [b, a], *own, (*speed, *course), p, place)], None))
         }
         _ => {
             let message = "both speeds before impact are given: there is nothing to solve for";
-            w.notices.push(
-                Notice::stop("P-3", message).at(place).expected("one or both speeds unknown").hint(
-                    "leave one out; holding all evidence against each other is the work of a reconciliation",
-                ),
-            );
+            let hint =
+                "leave one out; holding all evidence against each other is the work of a reconciliation";
+            let notice = Notice::stop("P-3", message).at(place).expected("one or both speeds unknown");
+            w.notices.push(notice.hint(hint));
             None
         }
     }
+}
+
+fn unknown_speed(
+    w: &mut Backward<'_>,
+    party: &Party<'_>,
+    node: &'static dyn Node,
+    ins: &[SlotId],
+    place: Place,
+) -> SlotId {
+    let title = format!("Speed of {} before impact", party.unit.id);
+    w.b.call(node, ins, format!("v_{{{}}}", party.unit.id), title, Some(place))
+}
+
+fn known_partner(
+    w: &mut Backward<'_>,
+    [mover, partner]: [&Party<'_>; 2],
+    own: SlotId,
+    (speed, course): (SlotId, SlotId),
+    [px, py]: [SlotId; 2],
+    place: Place,
+) -> SlotId {
+    let ins = [px, py, mover.mass, own, partner.mass, speed, course];
+    unknown_speed(w, mover, momentum::ApproachSpeedKnownPartner::NODE, &ins, place)
 }
 
 fn standing_partner(
@@ -312,13 +322,8 @@ fn standing_partner(
         "with only one unit moving, no momentum may be left across its course: directions, masses or speeds after \
          impact contradict each other",
     ));
-    w.b.call(
-        momentum::ApproachSpeedStandingPartner::NODE,
-        &[px, py, mover.mass, own],
-        format!("v_{{{}}}", mover.unit.id),
-        format!("Speed of {} before impact", mover.unit.id),
-        Some(place),
-    )
+    let ins = [px, py, mover.mass, own];
+    unknown_speed(w, mover, momentum::ApproachSpeedStandingPartner::NODE, &ins, place)
 }
 
 /// Delta-V, direction of force, closing speed, energy, restitution.
@@ -348,28 +353,7 @@ fn outcome(
     for i in [0, 1] {
         delta_v(w, parties[i], after_xy[i], before_xy[i]);
     }
-    let [a, b] = parties;
-    let flat: Vec<SlotId> = before_xy.iter().flatten().copied().collect();
-    let closing = w.b.call(momentum::ClosingSpeed::NODE, &flat, "V_{c}", "Closing speed", Some(place));
-    w.b.result("closing_speed", "Closing speed", closing);
-    let ins = [a.mass, before[0], a.after, b.mass, before[1], b.after];
-    let energy =
-        w.b.call(momentum::EnergyLost::NODE, &ins, "E_{lost}", "Energy lost in the impact", Some(place));
-    w.b.result_with(
-        "energy_lost".into(),
-        "Energy lost in the impact".into(),
-        energy,
-        "holds the spin energy left after the impact too (often a tenth, up to half)",
-    );
-    let all: Vec<SlotId> = before_xy.iter().chain(after_xy.iter()).flatten().copied().collect();
-    let title = "Restitution implied, centres of gravity along the line of the impulse";
-    let restitution = w.b.call(momentum::ImpliedRestitution::NODE, &all, "e", title, Some(place));
-    w.b.result_with(
-        "restitution".into(),
-        "Restitution implied".into(),
-        restitution,
-        "of the centres of gravity along the line of the impulse, not of the contact",
-    );
+    let restitution = losses(w, parties, before, before_xy, after_xy, place);
     w.b.plan.watch.momentum = Some(MomentumSlots {
         names: parties.map(|p| p.unit.id.clone()),
         mass: parties.map(|p| p.mass),
@@ -378,7 +362,6 @@ fn outcome(
             Approach::Stood { .. } => None,
             Approach::Course(c) | Approach::Known { course: c, .. } => Some(*c),
         }),
-        after: parties.map(|p| p.after),
         course: parties.map(|p| p.course),
         before_xy,
         after_xy,
@@ -386,6 +369,31 @@ fn outcome(
         restitution,
         place,
     });
+}
+
+/// Closing speed, energy lost and restitution; gives the slot of the last.
+fn losses(
+    w: &mut Backward<'_>,
+    [a, b]: [&Party<'_>; 2],
+    before: [SlotId; 2],
+    before_xy: [[SlotId; 2]; 2],
+    after_xy: [[SlotId; 2]; 2],
+    place: Place,
+) -> SlotId {
+    let flat: Vec<SlotId> = before_xy.iter().flatten().copied().collect();
+    let closing = w.b.call(momentum::ClosingSpeed::NODE, &flat, "V_{c}", "Closing speed", Some(place));
+    w.b.result("closing_speed", "Closing speed", closing);
+    let ins = [a.mass, before[0], a.after, b.mass, before[1], b.after];
+    let title = "Energy lost in the impact";
+    let energy = w.b.call(momentum::EnergyLost::NODE, &ins, "E_{lost}", title, Some(place));
+    let remark = "holds the spin energy left after the impact too (often a tenth, up to half)";
+    w.b.result_with("energy_lost".into(), title.into(), energy, remark);
+    let all: Vec<SlotId> = before_xy.iter().chain(after_xy.iter()).flatten().copied().collect();
+    let title = "Restitution implied, centres of gravity along the line of the impulse";
+    let restitution = w.b.call(momentum::ImpliedRestitution::NODE, &all, "e", title, Some(place));
+    let remark = "of the centres of gravity along the line of the impulse, not of the contact";
+    w.b.result_with("restitution".into(), "Restitution implied".into(), restitution, remark);
+    restitution
 }
 
 fn delta_v(w: &mut Backward<'_>, party: &Party<'_>, after: [SlotId; 2], before: [SlotId; 2]) {

@@ -178,8 +178,6 @@ pub struct MomentumSlots {
     pub before: [SlotId; 2],
     /// Approach courses; `None` for a unit that stood.
     pub approach: [Option<SlotId>; 2],
-    /// Speeds after.
-    pub after: [SlotId; 2],
     /// Courses after.
     pub course: [SlotId; 2],
     /// Components before: east, north.
@@ -221,6 +219,14 @@ impl Plan {
             }
         }
         calls
+    }
+
+    /// Slots that are no results but belong on the worksheet: the condition of
+    /// the solution, what should be zero, what a length is held against.
+    pub fn checks(&self) -> Vec<SlotId> {
+        let condition = self.watch.momentum.iter().filter_map(|m| m.condition);
+        let zeros = self.watch.zeros.iter().map(|(slot, _)| *slot);
+        condition.chain(zeros).chain(self.watch.chords.iter().map(|c| c.1)).collect()
     }
 
     /// The slot with this number.

@@ -16,13 +16,14 @@ mod m13_chord;
 mod m1_condition;
 mod m2_heavy_light;
 mod m3_departure;
+mod p5_sense;
 mod refused;
 mod s1_stability;
 
 use crate::case::Case;
 use crate::diag::Notice;
 use crate::plan::{Evaluation, Plan, SlotId};
-use crate::uncertainty::{Band, Sampling};
+use crate::uncertainty::{Band, Sampling, Trials};
 
 /// What a rule may look at.
 pub struct Facts<'a> {
@@ -36,6 +37,8 @@ pub struct Facts<'a> {
     pub bands: &'a [Option<Band>],
     /// The sampling behind the bands.
     pub sampling: &'a Sampling,
+    /// How many trials were asked for.
+    pub trials: Trials,
 }
 
 /// What a stop takes away.
@@ -78,6 +81,7 @@ const RULES: &[Rule] = &[
     m10_restitution::rule,
     m12_closure::rule,
     m13_chord::rule,
+    p5_sense::rule,
     s1_stability::rule,
     refused::rule,
 ];

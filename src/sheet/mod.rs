@@ -18,7 +18,9 @@ use crate::units::{Kind, System, decimals_for};
 /// which worked lines write its kind.
 fn decimals(kind: Kind, value: f64, u: f64) -> i32 {
     let scale = line_scale(kind);
-    decimals_for(u / scale).unwrap_or_else(|| exact_decimals(value / scale))
+    // Less than this is a rounding error, not an uncertainty.
+    let known = u < 1e-9 * value.abs();
+    decimals_for(if known { 0.0 } else { u / scale }).unwrap_or_else(|| exact_decimals(value / scale))
 }
 
 /// Exact values: as many decimals as they need, at most six.

@@ -29,6 +29,8 @@ pub enum Trials {
     UntilStable,
     /// This many, rounded up to whole blocks.
     Fixed(u64),
+    /// One block, to see what the entries reach; bands are not judged by it.
+    Look,
 }
 
 /// One result's distribution.
@@ -96,12 +98,13 @@ pub fn sample(
             Trials::Fixed(n) => {
                 usize::try_from(n.div_ceil(BLOCK as u64)).unwrap_or(usize::MAX).clamp(1, 100_000)
             }
+            Trials::Look => 1,
             Trials::UntilStable if blocks.is_empty() => FEWEST,
             Trials::UntilStable => STEP,
         };
         blocks.extend(run(blocks.len(), count));
         let sampling = summed(&blocks, scales);
-        let enough = matches!(trials, Trials::Fixed(_)) || blocks.len() >= MOST;
+        let enough = trials != Trials::UntilStable || blocks.len() >= MOST;
         if enough || sampling.stable {
             return sampling;
         }
@@ -190,7 +193,11 @@ fn mean_and_error(tallies: &[Tally], of: impl Fn(&Tally) -> f64) -> (f64, f64) {
     let h = tallies.len() as f64;
     let mean = tallies.iter().map(&of).sum::<f64>() / h;
     let squares: f64 = tallies.iter().map(|t| (of(t) - mean) * (of(t) - mean)).sum();
-    (mean, (squares / (h * (h - 1.0).max(1.0))).sqrt())
+    if tallies.len() < 2 {
+        // One block says nothing about its own error.
+        return (mean, f64::INFINITY);
+    }
+    (mean, (squares / (h * (h - 1.0))).sqrt())
 }
 
 /// Twice the standard error lies within half a unit of the last printed digit

@@ -62,7 +62,9 @@ pub fn significant(value: f64, figures: i32) -> String {
         return fixed(value, 0);
     }
     let magnitude = libm::floor(libm::log10(value.abs())) as i32;
-    fixed(value, (figures - 1 - magnitude).min(12))
+    let text = fixed(value, (figures - 1 - magnitude).min(12));
+    // What is left of a rounding error is a zero.
+    if text.chars().all(|c| matches!(c, '0' | '.')) { "0".into() } else { text }
 }
 
 fn power_of_ten(exponent: i32) -> f64 {

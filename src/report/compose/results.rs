@@ -155,6 +155,13 @@ fn reading(analysis: &Analysis) -> String {
 fn directions(analysis: &Analysis) -> Vec<Block> {
     let mut blocks = Vec::new();
     if let Some(impact) = &analysis.plan.watch.momentum {
+        if let Some(k) = impact.condition.and_then(|slot| analysis.evaluation.value(slot)) {
+            blocks.push(Block::Paragraph(format!(
+                "Condition of the momentum solution: K = {}. Errors of the directions weigh on both speeds in this \
+                 proportion; 1 is best, 2 at 30 degrees between the approach lines, 5.8 at 10 degrees.",
+                fixed(k.abs(), 2)
+            )));
+        }
         for i in [0, 1] {
             let word = |slot| analysis.evaluation.value(slot).map(compass);
             let before = impact.approach[i].and_then(word);
