@@ -135,7 +135,7 @@ impl<'a> Backward<'a> {
         if let Some(speed) = travel::chain(self, unit, phase, None) {
             self.b.result_with(
                 format!("{}.speed_at_start_of_marks", unit.id),
-                format!("Speed of {} at the start of its marks", unit.id),
+                format!("Speed of {} at the start of its marks (a minimum)", unit.id),
                 speed,
                 "a minimum: braking before the first visible mark is not counted, nor what happened after the last",
             );
@@ -149,7 +149,7 @@ impl<'a> Backward<'a> {
         if let Some(speed) = travel::chain(self, unit, phase, Some(impact_speed)) {
             self.b.result_with(
                 format!("{}.speed_at_start_of_marks", unit.id),
-                format!("Speed of {} at the start of its marks", unit.id),
+                format!("Speed of {} at the start of its marks (a minimum)", unit.id),
                 speed,
                 "a minimum for the onset of braking: braking before the first visible mark is not counted",
             );

@@ -53,7 +53,7 @@ fn table(analysis: &Analysis) -> Table {
             vec![
                 label(a),
                 text.value,
-                format!("{} to {}", text.low, text.high),
+                if a.band.u > 0.0 { format!("{} to {}", text.low, text.high) } else { "as entered".into() },
                 text.u,
                 contributors(analysis, a),
                 a.line.map_or_else(|| "entry".into(), |n| format!("[{n}]")),

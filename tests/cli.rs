@@ -1,0 +1,224 @@
+//! The program as a user meets it: commands, exit statuses, files, JSON.
+#![allow(clippy::unwrap_used, clippy::expect_used, clippy::panic)]
+
+mod common;
+
+use assert_cmd::Command;
+use common::root;
+use std::path::Path;
+
+fn retrodict(folder: &Path) -> Command {
+    let mut command = Command::cargo_bin("retrodict").unwrap();
+    command.current_dir(folder);
+    command
+}
+
+fn text(bytes: &[u8]) -> String {
+    String::from_utf8(bytes.to_vec()).unwrap()
+}
+
+fn demo() -> String {
+    root().join("cases/quarry-road.toml").to_string_lossy().to_string()
+}
+
+/// A case with an unanswered warning: a heavy and a light unit.
+fn with_warning() -> String {
+    common::text("cases/quarry-road.toml")
+        .replace("mass = { value = \"1650 ± 40 kg (limits)\"", "mass = { value = \"250 ± 5 kg (limits)\"")
+}
+
+fn folder_with(case: &str) -> tempfile::TempDir {
+    let folder = tempfile::tempdir().unwrap();
+    std::fs::write(folder.path().join("case.toml"), case).unwrap();
+    std::fs::copy(root().join("cases/quarry-road-points.csv"), folder.path().join("quarry-road-points.csv"))
+        .unwrap();
+    folder
+}
+
+#[test]
+fn print_writes_the_pdf_where_it_was_run_and_says_so() {
+    let folder = tempfile::tempdir().unwrap();
+    let output = retrodict(folder.path()).args(["print", &demo()]).output().unwrap();
+    assert_eq!(output.status.code(), Some(0), "{}", text(&output.stderr));
+    assert_eq!(text(&output.stdout), "wrote quarry-road.pdf\n");
+    let pdf = std::fs::read(folder.path().join("quarry-road.pdf")).unwrap();
+    assert!(pdf.starts_with(b"%PDF-"));
+    assert_eq!(std::fs::read_dir(folder.path()).unwrap().count(), 1, "only the PDF is left behind");
+}
+
+#[test]
+fn the_same_case_and_seed_give_the_same_bytes_on_one_thread_and_two() {
+    let folder = tempfile::tempdir().unwrap();
+    for (threads, name) in [("1", "a.pdf"), ("2", "b.pdf")] {
+        let mut command = retrodict(folder.path());
+        command.env("RAYON_NUM_THREADS", threads).args(["print", &demo(), "-o", name, "--seed", "7"]);
+        command.assert().success();
+    }
+    let read = |name: &str| std::fs::read(folder.path().join(name)).unwrap();
+    assert!(read("a.pdf") == read("b.pdf"), "the two PDF files differ");
+    let json = |threads: &str| {
+        let mut command = retrodict(folder.path());
+        command.env("RAYON_NUM_THREADS", threads).args(["solve", &demo(), "--json"]);
+        command.output().unwrap().stdout
+    };
+    assert!(json("1") == json("2"), "the two JSON objects differ");
+}
+
+#[test]
+fn print_never_leaves_half_a_file_and_never_touches_an_input() {
+    let folder = folder_with(&common::text("cases/quarry-road.toml"));
+    let before = std::fs::read(folder.path().join("case.toml")).unwrap();
+    for target in ["missing/x.pdf", "case.toml", "x.txt"] {
+        let output = retrodict(folder.path()).args(["print", "case.toml", "-o", target]).output().unwrap();
+        assert_eq!(output.status.code(), Some(2), "{target}");
+        assert!(text(&output.stderr).contains("was not written"), "{}", text(&output.stderr));
+    }
+    assert_eq!(before, std::fs::read(folder.path().join("case.toml")).unwrap());
+    assert_eq!(std::fs::read_dir(folder.path()).unwrap().count(), 2);
+}
+
+#[test]
+fn exit_statuses_are_0_1_and_2() {
+    let folder = folder_with(&with_warning());
+    let status = |args: &[&str]| retrodict(folder.path()).args(args).output().unwrap().status.code();
+    assert_eq!(status(&["check", &demo()]), Some(0));
+    assert_eq!(status(&["check", "case.toml"]), Some(1));
+    assert_eq!(status(&["solve", "case.toml"]), Some(1));
+    assert_eq!(status(&["print", "case.toml"]), Some(1));
+    std::fs::write(folder.path().join("bad.toml"), "format = 1\n[case\n").unwrap();
+    for command in ["check", "solve", "print"] {
+        assert_eq!(status(&[command, "bad.toml"]), Some(2), "{command}");
+        assert_eq!(status(&[command, "none.toml"]), Some(2), "{command}");
+    }
+    assert_eq!(status(&["prnit", "bad.toml"]), Some(2));
+    assert_eq!(status(&["--help"]), Some(0));
+}
+
+#[test]
+fn an_answered_warning_is_printed_and_no_longer_open() {
+    let answer = "\n[[answer]]\ncode = \"M-2\"\nreason = \"B's direction is fixed by a kerb scrape\"\nby = \"J. Example\"\n";
+    let m1 = answer.replace("M-2", "M-1");
+    let folder = folder_with(&(with_warning() + answer + &m1));
+    let output = retrodict(folder.path()).args(["solve", "case.toml"]).output().unwrap();
+    let page = text(&output.stdout).split_whitespace().collect::<Vec<_>>().join(" ");
+    assert!(page.contains("Answered: B's direction is fixed by a kerb scrape (J. Example)"), "{page}");
+    assert_eq!(output.status.code(), Some(0), "{page}");
+}
+
+#[test]
+fn json_is_one_object_with_the_agreed_keys() {
+    let output = retrodict(root()).args(["solve", "cases/quarry-road.toml", "--json"]).output().unwrap();
+    assert_eq!(output.status.code(), Some(0));
+    let json: serde_json::Value = serde_json::from_slice(&output.stdout).unwrap();
+    for key in ["format", "version", "case", "case_sha256", "seed", "trials", "results", "notices"] {
+        assert!(json.get(key).is_some(), "{key} is missing");
+    }
+    assert_eq!(json["format"], 1);
+    assert_eq!(json["case"], "QR-114");
+    assert!(json["caution"].as_str().unwrap().contains("not a finding of fault"));
+    let results = json["results"].as_object().unwrap();
+    for id in [
+        "A.speed_at_start_of_marks",
+        "A.impact_speed",
+        "B.impact_speed",
+        "A.post_impact_speed",
+        "B.post_impact_speed",
+        "A.delta_v",
+        "B.delta_v",
+        "A.pdof",
+        "B.pdof",
+        "closing_speed",
+        "energy_lost",
+        "restitution",
+    ] {
+        let result = results.get(id).unwrap_or_else(|| panic!("{id} is missing"));
+        for key in ["label", "unit", "value", "u", "low", "high", "coverage", "method"] {
+            assert!(result.get(key).is_some(), "{id} lacks {key}");
+        }
+        let number = |key: &str| result[key].as_f64().unwrap();
+        assert!(number("low") <= number("value") && number("value") <= number("high"), "{id}");
+        assert_eq!(number("coverage"), 0.95);
+    }
+    for notice in json["notices"].as_array().unwrap() {
+        for key in ["code", "severity", "message", "line"] {
+            assert!(notice.get(key).is_some(), "a notice lacks {key}");
+        }
+    }
+}
+
+/// SHA-256 by another program than ours: coreutils.
+#[test]
+fn the_hash_is_that_of_the_case_file() {
+    let Ok(sum) = std::process::Command::new("sha256sum").arg(demo()).output() else { return };
+    let wanted = text(&sum.stdout).split(' ').next().unwrap().to_string();
+    let output = retrodict(root()).args(["solve", &demo(), "--json"]).output().unwrap();
+    let json: serde_json::Value = serde_json::from_slice(&output.stdout).unwrap();
+    assert_eq!(json["case_sha256"], wanted.as_str());
+}
+
+#[test]
+fn a_refused_case_still_gives_json_with_its_reasons() {
+    let folder = folder_with("format = 1\nunti = 3\n");
+    let output = retrodict(folder.path()).args(["solve", "case.toml", "--json"]).output().unwrap();
+    assert_eq!(output.status.code(), Some(2));
+    let json: serde_json::Value = serde_json::from_slice(&output.stdout).unwrap();
+    assert!(json["results"].as_object().unwrap().is_empty());
+    let notices = json["notices"].as_array().unwrap();
+    assert!(notices.iter().any(|n| n["severity"] == "STOP" && n["line"] == 2), "{notices:?}");
+}
+
+#[test]
+fn nothing_piped_carries_colour() {
+    for args in [["solve", "cases/quarry-road.toml"], ["check", "cases/quarry-road.toml"]] {
+        let output = retrodict(root()).args(args).output().unwrap();
+        assert!(!output.stdout.contains(&0x1b) && !output.stderr.contains(&0x1b), "{args:?}");
+    }
+}
+
+#[test]
+fn every_page_of_help_has_an_example() {
+    for args in [&["--help"][..], &["check", "--help"], &["solve", "--help"], &["print", "--help"]] {
+        let output = retrodict(root()).args(args).output().unwrap();
+        let help = text(&output.stdout);
+        assert!(help.contains("Example") && help.contains("cases/quarry-road.toml"), "{args:?}: {help}");
+    }
+}
+
+#[test]
+fn the_terminal_and_the_pdf_carry_the_caution() {
+    let output = retrodict(root()).args(["solve", "cases/quarry-road.toml"]).output().unwrap();
+    let page =
+        text(&output.stdout).replace(['|', '\n'], " ").split_whitespace().collect::<Vec<_>>().join(" ");
+    for paragraph in retrodict::report::caution::FULL {
+        assert!(page.contains(paragraph), "missing: {paragraph}");
+    }
+    assert!(page.ends_with(retrodict::report::caution::SHORT));
+}
+
+/// Every command in the README's code blocks runs; `cargo run` and `cargo
+/// test` are what runs them.
+#[test]
+fn the_commands_of_the_readme_are_true() {
+    let readme = common::text("README.md");
+    let folder = tempfile::tempdir().unwrap();
+    let cases = folder.path().join("cases");
+    std::fs::create_dir(&cases).unwrap();
+    for entry in std::fs::read_dir(root().join("cases")).unwrap() {
+        let entry = entry.unwrap();
+        std::fs::copy(entry.path(), cases.join(entry.file_name())).unwrap();
+    }
+    let mut tried = 0;
+    for line in readme.lines() {
+        let words = match (line.strip_prefix("cargo run --release -- "), line.strip_prefix("retrodict ")) {
+            (Some(words), _) | (_, Some(words)) => words,
+            _ => continue,
+        };
+        let words = words.split(" > ").next().unwrap();
+        let output = retrodict(folder.path()).args(words.split_whitespace()).output().unwrap();
+        assert_eq!(output.status.code(), Some(0), "{line}: {}", text(&output.stderr));
+        tried += 1;
+    }
+    assert!(tried >= 4, "only {tried} commands were found in the README");
+    assert!(readme.contains("\ncargo run --release -- print cases/quarry-road.toml\n"));
+    assert!(readme.contains("\ncargo test\n"));
+}
