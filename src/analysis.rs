@@ -153,8 +153,13 @@ fn evaluate(case: Case, plan: Plan, options: Options) -> (Analysis, Vec<Notice>)
     (analysis, notices)
 }
 
+/// A result that stands, with its band.
+type Kept = (Named, Band);
+/// A result that does not, with the reason.
+type Refused = (Named, String);
+
 fn slot_u(plan: &Plan, evaluation: &Evaluation, slot: SlotId) -> f64 {
-    linear(plan, evaluation, slot).map_or(0.0, |l| l.u)
+    linear(plan, evaluation, slot).map_or(0.0, |l| if l.u.is_finite() { l.u } else { 0.0 })
 }
 
 /// Separates the results that stand from those that were refused or that a
@@ -164,7 +169,7 @@ fn withhold(
     evaluation: &Evaluation,
     bands: &[Option<Band>],
     findings: &[crate::rules::Finding],
-) -> (Vec<(Named, Band)>, Vec<(Named, String)>) {
+) -> (Vec<Kept>, Vec<Refused>) {
     let mut kept = Vec::new();
     let mut refused = Vec::new();
     for (named, band) in plan.results.iter().zip(bands) {

@@ -109,7 +109,9 @@ pub trait Node: Send + Sync {
     fn value(&self, x: &[f64]) -> Result<f64, Refusal>;
     /// The value and its derivative by each input.
     fn gradient(&self, x: &[f64]) -> Result<(f64, Vec<f64>), Refusal>;
-    /// The values of many trials; a trial outside the limits is not a number.
+    /// The values of many trials; a trial outside the limits, or one with an
+    /// input that is not a number, gives no finite number. Inputs are not
+    /// infinite: the plan's block lets no such trial through.
     fn batch(&self, x: &[Column<'_>], y: &mut Lanes);
     /// The formula itself.
     fn expression(&self) -> Expression;
@@ -200,7 +202,7 @@ fn check(card: &'static Card, x: &[f64], y: f64) -> Result<(), Refusal> {
             return Err(Refusal { reason: limit.reason, value, kind });
         }
     }
-    if y.is_finite() {
+    if y.is_finite() && x.iter().all(|x| x.is_finite()) {
         Ok(())
     } else {
         Err(Refusal { reason: card.undefined, value: y, kind: card.output.kind })

@@ -5,26 +5,9 @@
 mod common;
 
 use assert_cmd::Command;
-use common::{case_text, codes, said, text};
+use common::{case_text, codes, demo, said, text};
 use proptest::prelude::*;
 use retrodict::uncertainty::Trials;
-
-/// The demo with its points written into the case, so that it stands alone.
-fn demo() -> String {
-    let mut case = text("cases/quarry-road.toml");
-    let start = case.find("[survey]").unwrap();
-    let end = case.find("[friction_test.F1]").unwrap();
-    let mut points = String::new();
-    for row in text("cases/quarry-road-points.csv").lines().skip(1) {
-        let cells: Vec<&str> = row.split(',').collect();
-        points.push_str(&format!(
-            "[point.{}]\neast = \"{} ± 0.05 m (1 sd)\"\nnorth = \"{} ± 0.05 m (1 sd)\"\n",
-            cells[0], cells[1], cells[2]
-        ));
-    }
-    case.replace_range(start..end, &points);
-    case
-}
 
 /// Reads a broken case: it must be refused or flagged, with a message.
 fn refused(case: &str) -> String {

@@ -6,7 +6,7 @@
 
 mod common;
 
-use common::{case_file, close, text};
+use common::{case_file, near, text};
 use retrodict::uncertainty::Trials;
 
 #[test]
@@ -20,7 +20,7 @@ fn every_line_of_the_demo_agrees_with_hand_arithmetic() {
         let wanted = wanted.as_float().unwrap();
         let got = analysis.evaluation.value(line.slot).unwrap();
         // 15 printed digits; differences of two large numbers lose a few.
-        close(&line.title, got, wanted, 1e-11 * wanted.abs().max(1.0));
+        near(&line.title, got, wanted, 1e-11 * wanted.abs().max(1.0));
         left.retain(|title| **title != line.title);
     }
     assert!(left.is_empty(), "hand values without a line: {left:?}");

@@ -8,7 +8,7 @@
 
 mod common;
 #[path = "../src/report/pdf/read_back.rs"]
-#[allow(dead_code, unreachable_pub)]
+#[allow(unreachable_pub)]
 mod pdf_text;
 
 use common::case_file;
@@ -72,7 +72,7 @@ fn number(text: &str) -> Option<(Printed, &str)> {
     // Whole numbers and the half without a unit are constants of the formula
     // or exact entries, not roundings.
     let exact = unit.is_empty() && (decimals == 0 || digits == "0.5");
-    let half = if exact { 0.0 } else { 0.5 * 10f64.powi(-decimals) };
+    let half = if exact { 0.0 } else { 0.5 * libm::pow(10.0, f64::from(-decimals)) };
     Some((Printed { value: value * scale, half: half * scale }, &rest[unit.len()..]))
 }
 
@@ -172,7 +172,7 @@ fn result(line: &WorkedLine) -> (f64, f64) {
     let (printed, _) = number(text).expect("a result");
     let digits = &text[..text.find(|c: char| !c.is_ascii_digit() && c != '.').unwrap_or(text.len())];
     let zeros = if digits.contains('.') { 0 } else { digits.len() - digits.trim_end_matches('0').len() };
-    let half = if printed.half == 0.0 { 0.5 } else { printed.half } * 10f64.powi(zeros.min(3) as i32);
+    let half = if printed.half == 0.0 { 0.5 } else { printed.half } * libm::pow(10.0, zeros.min(3) as f64);
     let sign = if line.result.starts_with('−') { -1.0 } else { 1.0 };
     (sign * printed.value, half)
 }

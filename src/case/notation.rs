@@ -112,6 +112,16 @@ impl<'a> Piece<'a> {
 /// of its own means, if the case declares that.
 pub fn quantity(text: &str, kind: Kind, default: Option<Spread>) -> Result<Dist, Fault> {
     let whole = trim(Piece { text, from: 0 });
+    let dist = written(whole, kind, default)?;
+    // Finite numbers may still overflow with their unit's factor.
+    if dist.estimate().is_finite() && dist.u().is_finite() {
+        Ok(dist)
+    } else {
+        Err(whole.fault(UNREADABLE, "this is larger than any number", "a finite number and its unit"))
+    }
+}
+
+fn written(whole: Piece<'_>, kind: Kind, default: Option<Spread>) -> Result<Dist, Fault> {
     let (body, tag) = split_tag(whole)?;
     if let Some((at, length)) = find_plus_minus(body.text) {
         let (centre, spread) = body.split_at(at, length);

@@ -77,7 +77,8 @@ impl Plan {
                 let mut row = vec![0.0; self.inputs.len()];
                 for (slot, slope) in call.ins.iter().zip(&slopes) {
                     for (total, part) in row.iter_mut().zip(&e.rows[slot.0]) {
-                        *total += slope * part;
+                        // An infinite slope of what does not vary is no slope.
+                        *total += if *part == 0.0 { 0.0 } else { slope * part };
                     }
                 }
                 e.values[call.out.0] = value;

@@ -19,6 +19,8 @@ struct Party<'a> {
     after: Option<SlotId>,
     /// Signed velocity before impact, if known.
     before: Option<SlotId>,
+    /// The same as entered, without its sign.
+    speed_before: Option<SlotId>,
     /// Travels against the line before impact.
     against: bool,
     delta_v: Option<SlotId>,
@@ -31,11 +33,13 @@ pub(super) fn plan(w: &mut Backward<'_>, impact: &Impact, separation: &[Option<S
         let unit = w.unit(id);
         let speed = separation.get(id.0).copied().flatten();
         let mass = w.mass(id);
+        let known = known_before(w, unit);
         Party {
             unit,
             mass,
             after: signed_after(w, unit, speed),
-            before: known_before(w, unit),
+            before: known.map(|k| k.0),
+            speed_before: known.map(|k| k.1),
             against: i == 1
                 && before(unit).is_some_and(|p| matches!(p.direction, Some(Direction::Against(_)))),
             delta_v: impact.delta_v[i]
@@ -43,6 +47,12 @@ pub(super) fn plan(w: &mut Backward<'_>, impact: &Impact, separation: &[Option<S
                 .map(|entry| w.b.entry(format!("ΔV_{{{}}}", unit.id), entry, Role::Measured)),
         }
     });
+    if a.against {
+        let message = format!("{} is named first, so the line points the way it travels", a.unit.id);
+        let notice = Notice::stop("P-2", message).at(before(a.unit).map(|p| p.place));
+        w.notices.push(notice.expected("direction = \"along the line\" before impact for the first unit"));
+        return;
+    }
     w.b.section("Impact on one line");
     match (&a, &b) {
         (Party { after: Some(w1), .. }, Party { after: Some(w2), .. }) => backward(w, impact, [&a, &b], [*w1, *w2]),
@@ -85,20 +95,17 @@ fn signed_after(w: &mut Backward<'_>, unit: &Unit, speed: Option<SlotId>) -> Opt
     signed(w, unit, phase, speed?, format!("w′_{{{}}}", unit.id), "after impact")
 }
 
-fn known_before(w: &mut Backward<'_>, unit: &Unit) -> Option<SlotId> {
+/// A known velocity before impact: signed along the line, and as entered.
+fn known_before(w: &mut Backward<'_>, unit: &Unit) -> Option<(SlotId, SlotId)> {
     let phase = before(unit)?;
     if phase.standing {
         let name = format!("speed of {} before impact: it stood", unit.id);
-        return Some(w.b.assumed(
-            &format!("v_{{{}}}", unit.id),
-            Kind::Speed,
-            0.0,
-            &name,
-            "stated in the case",
-        ));
+        let zero = w.b.assumed(&format!("v_{{{}}}", unit.id), Kind::Speed, 0.0, &name, "stated in the case");
+        return Some((zero, zero));
     }
     let speed = w.b.entry(format!("v_{{{}}}", unit.id), phase.speed.as_ref()?, Role::Measured);
-    signed(w, unit, phase, speed, format!("w_{{{}}}", unit.id), "before impact")
+    let signed = signed(w, unit, phase, speed, format!("w_{{{}}}", unit.id), "before impact")?;
+    Some((signed, speed))
 }
 
 fn restitution(w: &mut Backward<'_>, entry: Option<&Entry>) -> Option<SlotId> {
@@ -238,7 +245,9 @@ fn outcome(
     let mut speeds = before;
     for i in [0, 1] {
         let p = parties[i];
-        if p.against && p.before.is_none() {
+        if let Some(entered) = p.speed_before {
+            speeds[i] = entered;
+        } else if p.against {
             let title = format!("Speed of {} before impact", p.unit.id);
             speeds[i] = w.b.call(
                 line::Reversed::NODE,
@@ -307,7 +316,8 @@ fn from_delta_vs(w: &mut Backward<'_>, impact: &Impact, a: &Party<'_>, b: &Party
     });
     let title = "Closing speed along the line from both delta-Vs";
     let closing = w.b.call(line::ClosingFromDeltaVs::NODE, &[k1, d1, k2, d2, e], "V_{c}", title, Some(place));
-    w.b.result("closing_speed", "Closing speed along the line", closing);
+    let remark = "along the line of the impulse; the two speeds themselves do not follow from delta-Vs";
+    w.b.result_with("closing_speed".into(), "Closing speed along the line".into(), closing, remark);
     for (p, d) in [(a, d1), (b, d2)] {
         w.b.result(format!("{}.delta_v", p.unit.id), format!("Delta-V of {} as recorded", p.unit.id), d);
     }

@@ -319,7 +319,7 @@ fn standing_partner(
     );
     w.b.plan.watch.zeros.push((
         across,
-        "with only one unit moving, no momentum may be left across its course: directions, masses or speeds after \
+        "momentum does not close: with only one unit moving, no momentum may be left across its course: directions, masses or speeds after \
          impact contradict each other",
     ));
     let ins = [px, py, mover.mass, own];

@@ -1,7 +1,8 @@
 //! M-10: the centres of gravity still closed in along the impulse.
 //!
-//! For points that means passing through each other. Real units can turn round
-//! each other, so for points it is a flag, not a stop.
+//! For points that means passing through each other. Real units turn round
+//! each other, and off-centre impacts mostly show it, so for points it is a
+//! remark: the momentum sums hold all the same.
 
 use super::{Facts, Finding};
 use crate::diag::Notice;
@@ -17,6 +18,7 @@ pub(super) fn rule(facts: &Facts<'_>) -> Vec<Finding> {
         "restitution implied is {}: after the impact the centres of gravity still closed in along the impulse",
         fixed(e, 2)
     );
-    let hint = "the units turned round each other or slid past: a model with rotation is needed, or a direction is wrong";
-    vec![Notice::warn("M-10", message).at(impact.place).hint(hint).into()]
+    let hint = "usual where units turn round each other or slide past; momentum holds all the same, but restitution \
+                of points says nothing here";
+    vec![Notice::note("M-10", message).at(impact.place).hint(hint).into()]
 }

@@ -14,10 +14,7 @@ pub(super) fn rule(facts: &Facts<'_>) -> Vec<Finding> {
         let u = facts.u(*slot);
         if u > 0.0 && value.abs() > 2.0 * u {
             let place = facts.plan.call_of(*slot).and_then(|c| facts.plan.calls.get(c)).and_then(|c| c.place);
-            let message = format!(
-                "momentum does not close: {sentence} ({} standard uncertainties)",
-                fixed(value.abs() / u, 1)
-            );
+            let message = format!("{sentence} ({} standard uncertainties)", fixed(value.abs() / u, 1));
             found.push(
                 Notice::warn("M-12", message).at(place).hint("see the line that should be zero").into(),
             );

@@ -2,8 +2,9 @@
 //!
 //! Errors of the two speeds grow as K = 1/|sin Δ|: 2 at 30°, 3.9 at 15°, 5.8
 //! at 10°. From there on momentum alone does not tell the speeds apart; nor
-//! does it when the band grows wider than half the speed.
+//! does it from 30° on when a band grows wider than half its speed.
 
+use super::m14_wide::too_wide;
 use super::{Facts, Finding, Withheld};
 use crate::diag::Notice;
 use crate::units::{Kind, System, fixed};
@@ -26,38 +27,21 @@ pub(super) fn rule(facts: &Facts<'_>) -> Vec<Finding> {
         fixed(degrees, 0),
         fixed(k, 1)
     );
-    let mut found: Vec<Finding> = Vec::new();
-    let wide = too_wide(facts, &impact.names);
     if k >= STOP_FROM {
-        let message = format!("{angle}: momentum cannot tell the two speeds apart");
-        found.push(stop(message, impact.place));
-    } else if k >= WARN_FROM && wide.is_some() {
-        let message = format!("{angle}, and {}", wide.unwrap_or_default());
-        found.push(stop(message, impact.place));
-    } else if k >= WARN_FROM {
-        let strength = if k >= STRONG_FROM { "strongly" } else { "markedly" };
-        let message = format!("{angle}: errors of the directions weigh {strength} on the speeds");
-        found.push(Notice::warn("M-1", message).at(impact.place).hint(REMEDY).into());
-    } else if let Some(wide) = wide {
-        found.push(
-            Notice::warn("M-1", wide)
-                .at(impact.place)
-                .hint("see the budget for the entry that drives it")
-                .into(),
-        );
+        return vec![stop(format!("{angle}: momentum cannot tell the two speeds apart"), impact.place)];
     }
-    found
+    if k < WARN_FROM {
+        return Vec::new();
+    }
+    if let Some(name) = too_wide(facts) {
+        let message = format!("{angle}, and the 95 % band of {name}'s speed is wider than half the speed");
+        return vec![stop(message, impact.place)];
+    }
+    let strength = if k >= STRONG_FROM { "strongly" } else { "markedly" };
+    let message = format!("{angle}: errors of the directions weigh {strength} on the speeds");
+    vec![Notice::warn("M-1", message).at(impact.place).hint(REMEDY).into()]
 }
 
 fn stop(message: String, place: crate::diag::Place) -> Finding {
     Finding { notice: Notice::stop("M-1", message).at(place).hint(REMEDY), withheld: Withheld::Impact }
-}
-
-/// The first unit whose 95 % band is wider than half its speed.
-fn too_wide(facts: &Facts<'_>, names: &[String; 2]) -> Option<String> {
-    names.iter().find_map(|name| {
-        let band = facts.band(&format!("{name}.impact_speed"))?;
-        let wide = band.u > 0.0 && band.high - band.low > 0.5 * band.value.abs();
-        wide.then(|| format!("the 95 % band of {name}'s speed is wider than half the speed"))
-    })
 }

@@ -10,8 +10,9 @@ use crate::units::{Kind, System, fixed};
 
 /// Degrees between path and line to rest from which the rule speaks.
 const TURN: f64 = 5.0;
-/// A first step shorter than this says little about a direction, metres.
-const SHORT_STEP: f64 = 1.0;
+/// A first step shorter than this says little about a direction; one longer
+/// may have curved already. Metres.
+const STEP: std::ops::Range<f64> = 1.0..4.0;
 
 pub(super) fn rule(facts: &Facts<'_>) -> Vec<Finding> {
     facts.plan.watch.departures.iter().flat_map(|d| departure(facts, d)).collect()
@@ -40,14 +41,14 @@ fn departure(facts: &Facts<'_>, d: &Departure) -> Vec<Finding> {
         );
         let hint = "a point of the path 1 to 3 m after separation would give the direction just after it";
         found.push(Notice::warn("M-3", message).at(d.place).hint(hint).into());
-    } else if !d.stated && step < SHORT_STEP {
+    } else if !d.stated && !STEP.contains(&step) {
         let message = format!(
-            "the direction of {} after impact comes from two points only {} m apart",
+            "the direction of {} after impact comes from two points {} m apart",
             d.unit,
             fixed(step, 2)
         );
         found.push(
-            Notice::note("M-3", message).at(d.place).hint("take a point 1 to 3 m after separation").into(),
+            Notice::note("M-3", message).at(d.place).hint("a point 1 to 3 m after separation is best: nearer it is uncertain, farther it may have curved").into(),
         );
     }
     let stated_off = System::Metric.number(Kind::Angle, self::turn(first, course)).abs();

@@ -13,6 +13,7 @@ mod d2_crest;
 mod m10_restitution;
 mod m12_closure;
 mod m13_chord;
+mod m14_wide;
 mod m1_condition;
 mod m2_heavy_light;
 mod m3_departure;
@@ -81,6 +82,7 @@ const RULES: &[Rule] = &[
     m10_restitution::rule,
     m12_closure::rule,
     m13_chord::rule,
+    m14_wide::rule,
     p5_sense::rule,
     s1_stability::rule,
     refused::rule,
@@ -95,12 +97,6 @@ impl Facts<'_> {
     /// Standard uncertainty of any slot, by linear propagation.
     fn u(&self, slot: SlotId) -> f64 {
         let parts = self.plan.inputs.iter().zip(self.evaluation.row(slot)).map(|(i, s)| i.dist.u() * s);
-        parts.map(|p| p * p).sum::<f64>().sqrt()
-    }
-
-    /// The band of a result.
-    fn band(&self, id: &str) -> Option<&Band> {
-        let index = self.plan.results.iter().position(|r| r.id == id)?;
-        self.bands.get(index)?.as_ref()
+        parts.filter(|p| p.is_finite()).map(|p| p * p).sum::<f64>().sqrt()
     }
 }

@@ -15,13 +15,13 @@ pub(super) fn rule(facts: &Facts<'_>) -> Vec<Finding> {
         .iter()
         .zip(facts.bands)
         .filter(|(_, b)| b.as_ref().is_some_and(|b| b.basis == Basis::MonteCarlo))
-        .map(|(r, _)| r.id.as_str())
+        .map(|(r, _)| r.label.as_str())
         .collect();
     if !differ.is_empty() {
         let message = format!(
             "linear propagation and Monte Carlo differ by more than the numerical tolerance of JCGM 101, 8.1; the \
              Monte Carlo band is printed for: {}",
-            differ.join(", ")
+            differ.join("; ")
         );
         found.push(Notice::note("S-1", message).into());
     }

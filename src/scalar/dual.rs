@@ -23,13 +23,18 @@ impl<const N: usize> Dual<N> {
 
     /// Chain rule: the new value, and the slope of the outer function.
     fn chain(self, value: f64, slope: f64) -> Self {
-        Dual { value, slopes: self.slopes.map(|s| s * slope) }
+        Dual { value, slopes: self.slopes.map(|s| times(s, slope)) }
     }
 
     /// Chain rule for two arguments.
     fn chain2(self, other: Self, value: f64, by_self: f64, by_other: f64) -> Self {
-        Dual { value, slopes: from_fn(|i| self.slopes[i] * by_self + other.slopes[i] * by_other) }
+        Dual { value, slopes: from_fn(|i| times(self.slopes[i], by_self) + times(other.slopes[i], by_other)) }
     }
+}
+
+/// What does not vary has no slope, even where the outer slope is infinite.
+fn times(slope: f64, outer: f64) -> f64 {
+    if slope == 0.0 { 0.0 } else { slope * outer }
 }
 
 impl<const N: usize> Add for Dual<N> {
@@ -75,9 +80,6 @@ impl<const N: usize> Real for Dual<N> {
 
     fn sqrt(self) -> Self {
         let root = self.value.sqrt();
-        if root == 0.0 && self.slopes.iter().all(|s| *s == 0.0) {
-            return Self::of(0.0);
-        }
         self.chain(root, 0.5 / root)
     }
 
@@ -91,7 +93,7 @@ impl<const N: usize> Real for Dual<N> {
 
     fn atan2(self, x: Self) -> Self {
         let r2 = self.value * self.value + x.value * x.value;
-        self.chain2(x, libm::atan2(self.value, x.value), x.value / r2, -self.value / r2)
+        self.chain2(x, Real::atan2(self.value, x.value), x.value / r2, -self.value / r2)
     }
 }
 

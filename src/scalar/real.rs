@@ -17,7 +17,8 @@ pub trait Real:
     fn sin(self) -> Self;
     /// The cosine of an angle in radians.
     fn cos(self) -> Self;
-    /// The angle of the vector (`x`, `self`), in (−π, π].
+    /// The angle of the vector (`x`, `self`), in (−π, π]; not a number for a
+    /// vector without length, which has none.
     fn atan2(self, x: Self) -> Self;
 
     /// The square.
@@ -50,6 +51,6 @@ impl Real for f64 {
 
     #[inline(always)]
     fn atan2(self, x: Self) -> Self {
-        libm::atan2(self, x)
+        if self == 0.0 && x == 0.0 { f64::NAN } else { libm::atan2(self, x) }
     }
 }

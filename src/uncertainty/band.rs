@@ -53,14 +53,18 @@ pub fn bands(linear: Vec<Option<Linear>>, sampling: &Sampling, scales: &[f64]) -
 
 /// JCGM 101, 8.1: linear propagation is confirmed when both interval ends
 /// agree within half a unit of the last digit regarded as meaningful. One
-/// digit of u is so regarded here (7.9.2 allows one or two), and the sampling
-/// error of the ends is granted on top.
+/// digit of u is so regarded here (7.9.2 allows one or two), but never more
+/// than a fifth of u: the first digit alone would let u = 10 pass with half of
+/// itself. The sampling error of the ends is granted on top.
 fn band(linear: Linear, sampled: Sampled, scale: f64) -> Band {
     let sure = linear.u == 0.0 && sampled.u <= 1e-12 * linear.value.abs();
     let difference = (linear.low() - sampled.low).abs().max((linear.high() - sampled.high).abs());
     let allowed = tolerance(sampled.u, scale) + 2.0 * sampled.errors[2].max(sampled.errors[3]);
+    let beyond = linear.k * linear.u > linear.worst * (1.0 + 1e-9);
     let basis = match () {
         () if sure => Basis::Exact,
+        // A band must not reach beyond the bounding case.
+        () if beyond => Basis::MonteCarlo,
         () if difference <= allowed => Basis::Linear,
         () => Basis::MonteCarlo,
     };
@@ -72,7 +76,8 @@ fn band(linear: Linear, sampled: Sampled, scale: f64) -> Band {
     Band { value, u, low, high, basis, linear, sampled, difference: (difference, allowed) }
 }
 
-/// Half a unit of the first digit of u, in SI.
+/// Half a unit of the first digit of u, at most u/5, in SI.
 fn tolerance(u: f64, scale: f64) -> f64 {
-    decimals_for(u / scale).map_or(0.0, |two| 0.5 * libm::pow(10.0, f64::from(1 - two)) * scale)
+    let digit = decimals_for(u / scale).map_or(0.0, |two| 0.5 * libm::pow(10.0, f64::from(1 - two)) * scale);
+    digit.min(0.2 * u)
 }

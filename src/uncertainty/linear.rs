@@ -24,7 +24,8 @@ pub struct Share {
 pub struct Linear {
     /// Value at the best estimates.
     pub value: f64,
-    /// Combined standard uncertainty.
+    /// Combined standard uncertainty; not a number where a slope is infinite,
+    /// as that of a root at zero: linear propagation says nothing there.
     pub u: f64,
     /// Effective degrees of freedom.
     pub dof: f64,
@@ -58,8 +59,11 @@ pub fn linear(plan: &Plan, evaluation: &Evaluation, slot: SlotId) -> Option<Line
     let mut worst = 0.0;
     for (input, (known, slope)) in plan.inputs.iter().zip(row).enumerate() {
         let part = slope * known.dist.u();
-        if part != 0.0 && part.is_finite() {
-            variance += part * part;
+        if known.dist.is_exact() || part == 0.0 {
+            continue;
+        }
+        variance += part * part;
+        if part.is_finite() {
             worst += (slope * known.dist.reach()).abs();
             shares.push(Share { input, slope: *slope, part, of_variance: 0.0 });
         }
@@ -69,5 +73,12 @@ pub fn linear(plan: &Plan, evaluation: &Evaluation, slot: SlotId) -> Option<Line
     }
     let dof = welch_satterthwaite(shares.iter().map(|s| (s.part, plan.inputs[s.input].dist.dof())));
     shares.sort_by(|a, b| b.of_variance.total_cmp(&a.of_variance).then(a.input.cmp(&b.input)));
-    Some(Linear { value, u: variance.sqrt(), dof, k: student_t_two_sided(dof), shares, worst })
+    Some(Linear {
+        value,
+        u: if variance.is_finite() { variance.sqrt() } else { f64::NAN },
+        dof,
+        k: student_t_two_sided(dof),
+        shares,
+        worst,
+    })
 }

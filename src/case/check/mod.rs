@@ -113,7 +113,7 @@ fn points(
                     files.push(SourceFile { name, text });
                 }
                 Ok(_) => {
-                    cx.notices.push(Notice::stop("CF-9", format!("{name} is too large")).at(item.place()))
+                    cx.notices.push(Notice::stop("CF-9", format!("{name} is too large")).at(item.place()));
                 }
                 Err(why) => cx.notices.push(
                     Notice::stop("CF-9", format!("the survey points cannot be read: {why}"))

@@ -58,7 +58,7 @@ fn length(
     }
     let last = path.len().saturating_sub(1);
     let mut end_of = |key: &str, otherwise: usize| match point(section, key, scope.points, cx) {
-        Some(id) => path.iter().position(|p| *p == id).map_or(Err(()), Ok),
+        Some(id) => path.iter().position(|p| *p == id).ok_or(()),
         None => Ok(otherwise),
     };
     match (end_of("from", 0), end_of("to", last)) {

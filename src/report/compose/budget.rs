@@ -113,6 +113,15 @@ fn summary(analysis: &Analysis, answered: &Answered) -> String {
     let s = &answered.band.sampled;
     let decimals = decimals_for(l.u / scale).unwrap_or(3);
     let show = |v: f64| fixed(v / scale, decimals);
+    if !l.u.is_finite() {
+        return format!(
+            "Linear propagation says nothing here: a quantity under a root is zero at its best estimate. Monte Carlo: \
+             u = {}, 95 % from {} to {} {unit}.",
+            significant(s.u / scale, 2),
+            significant(s.low / scale, 3),
+            significant(s.high / scale, 3)
+        );
+    }
     let dof = if l.dof > 1e4 { "∞".to_string() } else { fixed(l.dof, 0) };
     format!(
         "Linear: u = {} {unit}, effective degrees of freedom {dof}, k = {}, 95 % from {} to {}. Monte Carlo: u = {}, \

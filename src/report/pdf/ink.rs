@@ -51,7 +51,7 @@ impl<'a> Ink<'a> {
                     self.line([on_paper(top, *from), on_paper(top, *to)], pen);
                 }
                 Draw::Fill(spots, grey) => {
-                    self.fill(spots.iter().map(|spot| on_paper(top, *spot)).collect(), *grey)
+                    self.fill(spots.iter().map(|spot| on_paper(top, *spot)).collect(), *grey);
                 }
                 Draw::Entry(_) => {}
             }

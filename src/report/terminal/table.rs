@@ -22,8 +22,9 @@ pub(super) fn render(table: &Table, columns: usize) -> String {
     text
 }
 
-/// Every column gets what it needs, up to its share by weight; what narrow
-/// columns leave goes to the others.
+/// Columns of numbers get what they need, since a number must not be broken;
+/// columns of words share the rest by weight, and what narrow ones leave goes
+/// to the others.
 fn widths(table: &Table, heads: &[String], cells: &[Vec<String>], columns: usize) -> Vec<usize> {
     let room = columns.saturating_sub(GAP.len() * table.columns.len().saturating_sub(1)) as f64;
     let need: Vec<f64> = (0..heads.len())
@@ -33,8 +34,10 @@ fn widths(table: &Table, heads: &[String], cells: &[Vec<String>], columns: usize
         })
         .collect();
     let mut width = vec![0.0; heads.len()];
-    let mut open: Vec<usize> = (0..heads.len()).collect();
-    let mut left = room;
+    let is_number = |i: &usize| table.columns[*i].align == Align::Right && need[*i] < room / 4.0;
+    let (numbers, mut open): (Vec<usize>, Vec<usize>) = (0..heads.len()).partition(is_number);
+    numbers.iter().for_each(|i| width[*i] = need[*i]);
+    let mut left = room - numbers.iter().map(|i| need[*i]).sum::<f64>();
     while !open.is_empty() {
         let weight: f64 = open.iter().map(|i| table.columns[*i].weight).sum();
         let share = |i: usize| left * table.columns[i].weight / weight;

@@ -1,0 +1,24 @@
+//! M-14: a band wider than half the speed it belongs to.
+//!
+//! Such a speed is hardly known; the budget tells what drives it. Where the
+//! approach directions lie near one line the stop of M-1 speaks instead.
+
+use super::{Facts, Finding};
+use crate::diag::Notice;
+
+pub(super) fn rule(facts: &Facts<'_>) -> Vec<Finding> {
+    let Some(name) = too_wide(facts) else { return Vec::new() };
+    let place = facts.case.impacts.first().map(|i| i.place);
+    let message = format!("the 95 % band of {name}'s speed at impact is wider than half the speed");
+    let hint = "the budget names the entries that drive it: measure those better, or add other evidence";
+    vec![Notice::warn("M-14", message).at(place).hint(hint).into()]
+}
+
+/// The first unit whose 95 % band is wider than half its impact speed.
+pub(super) fn too_wide(facts: &Facts<'_>) -> Option<String> {
+    facts.plan.results.iter().zip(facts.bands).find_map(|(result, band)| {
+        let name = result.id.strip_suffix(".impact_speed")?;
+        let band = band.as_ref().filter(|b| b.u > 0.0)?;
+        (band.high - band.low > 0.5 * band.value.abs()).then(|| name.to_string())
+    })
+}
