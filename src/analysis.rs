@@ -146,7 +146,7 @@ fn evaluate(case: Case, plan: Plan, options: Options) -> (Analysis, Vec<Notice>)
             Answered { named, band, line }
         })
         .collect();
-    let register = register(&plan);
+    let register = register(&plan, &shown);
     let notices = findings.into_iter().map(|f| f.notice).collect();
     let analysis =
         Analysis { case, plan, evaluation, results, refused, register, lines, sampling, seed: options.seed };

@@ -471,3 +471,24 @@ fn the_same_seed_gives_the_same_bytes_on_one_thread_and_on_two() {
     assert!(one.0.iter().zip(&other.0).all(|(a, b)| a != b), "another seed gives the same numbers");
     assert_ne!(one.1, other.1);
 }
+
+/// On the demo linear propagation and Monte Carlo agree for every speed within
+/// the tolerance of JCGM 101, 8.1 (one meaningful digit of u, at most u/5); for
+/// the directions of force and the energy they do not, and the notices say so.
+#[test]
+fn on_the_demo_both_propagations_agree_for_every_speed() {
+    let o = common::case_file("quarry-road.toml", Trials::Fixed(1_000_000));
+    let said = common::notices(&o);
+    for r in &o.analysis.unwrap().results {
+        let is_speed = r.named.id.contains("speed") || r.named.id.ends_with("delta_v");
+        if is_speed {
+            assert_eq!(r.band.basis, Basis::Linear, "{}: {:?}", r.named.id, r.band.difference);
+            assert!(r.band.difference.0 <= r.band.difference.1, "{}", r.named.id);
+        }
+        let named =
+            said.contains(&r.named.label) && said.contains("differ by more than the numerical tolerance");
+        if r.band.basis == Basis::MonteCarlo {
+            assert!(r.band.difference.0 > r.band.difference.1 && named, "{}", r.named.id);
+        }
+    }
+}

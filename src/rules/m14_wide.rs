@@ -7,6 +7,14 @@ use super::{Facts, Finding};
 use crate::diag::Notice;
 
 pub(super) fn rule(facts: &Facts<'_>) -> Vec<Finding> {
+    // From there on M-1 speaks of the same.
+    let condition = facts.plan.watch.momentum.as_ref().and_then(|m| m.condition);
+    if condition
+        .and_then(|slot| facts.evaluation.value(slot))
+        .is_some_and(|k| k.abs() >= super::m1_condition::WARN_FROM)
+    {
+        return Vec::new();
+    }
     let Some(name) = too_wide(facts) else { return Vec::new() };
     let place = facts.case.impacts.first().map(|i| i.place);
     let message = format!("the 95 % band of {name}'s speed at impact is wider than half the speed");

@@ -9,7 +9,7 @@ use super::{Facts, Finding, Withheld};
 use crate::diag::Notice;
 use crate::units::{Kind, System, fixed};
 
-const WARN_FROM: f64 = 2.0;
+pub(super) const WARN_FROM: f64 = 2.0;
 const STRONG_FROM: f64 = 3.9;
 const STOP_FROM: f64 = 5.8;
 const REMEDY: &str =

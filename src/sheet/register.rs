@@ -1,7 +1,7 @@
 //! The register of everything that enters.
 
 use super::decimals;
-use crate::plan::{Input, Plan, Role};
+use crate::plan::{Input, Plan, Role, SlotId};
 use crate::stats::Dist;
 use crate::units::{decimals_for, si};
 
@@ -26,9 +26,16 @@ pub struct Row {
     pub role: Role,
 }
 
-/// All rows, in the order of the inputs.
-pub fn register(plan: &Plan) -> Vec<Row> {
-    plan.inputs.iter().enumerate().map(|(i, input)| row(plan, i, input)).collect()
+/// The rows, in the order of the inputs: every entry of the case, and of what
+/// nobody entered that which `shown` slots need.
+pub fn register(plan: &Plan, shown: &[SlotId]) -> Vec<Row> {
+    let calls = plan.needed(shown);
+    let used = |slot: SlotId| {
+        let in_line = plan.calls.iter().zip(&calls).any(|(call, needed)| *needed && call.ins.contains(&slot));
+        in_line || shown.contains(&slot)
+    };
+    let rows = plan.inputs.iter().enumerate();
+    rows.filter(|(_, i)| i.place.is_some() || used(i.slot)).map(|(i, input)| row(plan, i, input)).collect()
 }
 
 fn row(plan: &Plan, index: usize, input: &Input) -> Row {

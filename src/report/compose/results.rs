@@ -67,7 +67,7 @@ fn table(analysis: &Analysis) -> Table {
             Column::numbers("95 % band", 1.7),
             Column::numbers("u", 0.8),
             Column::words("Biggest contributors (share of variance)", 3.4),
-            Column::numbers("Line", 0.6),
+            Column::numbers("Line", 0.75),
         ],
         rows,
     }
