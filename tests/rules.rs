@@ -386,3 +386,14 @@ fn a_stop_cannot_be_answered_away() {
     assert_eq!(outcome.status(), 2);
     assert!(said(&outcome).contains("a STOP cannot be answered away"));
 }
+
+#[test]
+fn m13_a_forgotten_stretch_is_found() {
+    // Without its first stretch, B's six metres on the verge cannot take it
+    // from separation to rest, twelve metres apart.
+    let start = demo().find("[[unit.B.post_impact.travel]]").unwrap();
+    let end = demo()[start + 5..].find("[[unit.B.post_impact.travel]]").unwrap() + start + 5;
+    let mut seeded = demo();
+    seeded.replace_range(start..end, "");
+    fires("STOP M-13", &seeded, &demo());
+}

@@ -45,7 +45,7 @@ pub struct Identity {
 }
 
 /// One entered quantity.
-#[derive(Debug, Clone)]
+#[derive(Debug, Clone, PartialEq)]
 pub struct Entry {
     /// What it is, in words.
     pub name: String,
@@ -214,7 +214,7 @@ pub struct Stretch {
 }
 
 /// Where a stretch's length comes from.
-#[derive(Debug, Clone)]
+#[derive(Debug, Clone, PartialEq)]
 pub enum StretchLength {
     /// Measured.
     Entered(Entry),

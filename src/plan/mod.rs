@@ -226,7 +226,7 @@ impl Plan {
     pub fn checks(&self) -> Vec<SlotId> {
         let condition = self.watch.momentum.iter().filter_map(|m| m.condition);
         let zeros = self.watch.zeros.iter().map(|(slot, _)| *slot);
-        condition.chain(zeros).chain(self.watch.chords.iter().map(|c| c.1)).collect()
+        condition.chain(zeros).chain(self.watch.chords.iter().flat_map(|c| [c.0, c.1])).collect()
     }
 
     /// The slot with this number.

@@ -2,7 +2,7 @@
 
 use super::backward::Backward;
 use super::{Role, SlotId};
-use crate::case::{Begin, Drag, Entry, Phase, StandsFor, Stretch, StretchLength, TestId, Unit};
+use crate::case::{Begin, Drag, Phase, StandsFor, Stretch, StretchLength, TestId, Unit};
 use crate::physics::{braking, path};
 use crate::stats::Dist;
 use crate::units::Kind;
@@ -27,6 +27,7 @@ pub(super) fn chain(
 ) -> Option<SlotId> {
     let after = matches!(phase.begin, Begin::Impact(_));
     let mut speed = end_speed;
+    let mut lengths = Vec::new();
     for (index, stretch) in phase.travel.iter().enumerate().rev() {
         let names = Names {
             index: format!("{},{}", unit.id, index + 1),
@@ -39,6 +40,7 @@ pub(super) fn chain(
             },
         };
         let length = length(w, phase, stretch, &names);
+        lengths.insert(0, length);
         let drag = drag(w, stretch, after, &names);
         let symbol = match (index, after) {
             (0, true) => format!("v′_{{{}}}", unit.id),
@@ -58,33 +60,44 @@ pub(super) fn chain(
             }
         });
     }
+    chord(w, unit, phase, &lengths);
     speed
 }
 
 fn length(w: &mut Backward<'_>, phase: &Phase, stretch: &Stretch, names: &Names) -> SlotId {
     let symbol = format!("d{}_{{{}}}", names.prime, names.index);
     match &stretch.length {
-        StretchLength::Entered(entry) => {
-            let slot = w.b.entry(symbol, entry, Role::Measured);
-            chord(w, phase, slot, entry, names);
-            slot
-        }
+        StretchLength::Entered(entry) => w.b.entry(symbol, entry, Role::Measured),
         StretchLength::AlongPath(from, to) => along_path(w, phase, *from, *to, &symbol, names),
     }
 }
 
-/// An entered length that is the only one of a phase with a path can be held
-/// against the straight line between the path's ends.
-fn chord(w: &mut Backward<'_>, phase: &Phase, length: SlotId, entry: &Entry, names: &Names) {
-    let (Some(first), Some(last)) = (phase.path.first(), phase.path.last()) else { return };
-    if phase.travel.len() != 1 || first == last {
+/// The lengths of a phase's stretches together can be no less than the
+/// straight line from separation to rest: a stretch may be too short, or
+/// missing.
+fn chord(w: &mut Backward<'_>, unit: &Unit, phase: &Phase, lengths: &[SlotId]) {
+    let whole = [StretchLength::AlongPath(0, phase.path.len().saturating_sub(1))];
+    let alone = phase.travel.iter().map(|s| &s.length).eq(&whole);
+    let (Some(first), Some(last), Some((so_far, rest))) =
+        (phase.path.first(), phase.path.last(), lengths.split_first())
+    else {
+        return;
+    };
+    if alone || first == last {
         return;
     }
+    let place = Some(phase.place);
+    let words = format!("{} after impact", unit.id);
+    let mut total = *so_far;
+    for length in rest {
+        let title = format!("Length of all stretches so far: {words}");
+        let symbol = format!("Σd′_{{{}}}", unit.id);
+        total = w.b.call(path::LongerPath::NODE, &[total, *length], symbol, title, place);
+    }
     let ins = w.two_points(*first, *last);
-    let symbol = format!("c{}_{{{}}}", names.prime, names.index);
-    let title = format!("Straight line from separation to rest: {}", names.words);
-    let slot = w.b.call(path::Leg::NODE, &ins, symbol, title, Some(entry.place));
-    w.b.plan.watch.chords.push((length, slot, entry.place, names.words.clone()));
+    let title = format!("Straight line from separation to rest: {words}");
+    let chord = w.b.call(path::Leg::NODE, &ins, format!("c′_{{{}}}", unit.id), title, place);
+    w.b.plan.watch.chords.push((total, chord, phase.place, words));
 }
 
 fn along_path(

@@ -52,6 +52,8 @@ b2 = line("Distance from point 42 to point 43: B after impact, stretch 1", dist(
 d1 = line("Length of the path: B after impact, stretch 1", b1 + b2)
 f1 = line("Drag factor: B after impact, stretch 1", M("0.8") * mu1)
 vB1 = line("Speed of B after impact", sqrt(vj ** 2 + 2 * g * f1 * d1))
+line("Length of all stretches so far: B after impact", d1 + d2)
+line("Straight line from separation to rest: B after impact", dist(41, 44))
 # masses, directions
 mA = line("Mass of A in the crash", M(1480) + 75)
 thA = line("Direction in which A left the impact", course(31, 32))
