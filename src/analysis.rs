@@ -8,10 +8,10 @@ use crate::case::{Case, Checked};
 use crate::diag::{Notice, Notices, Severity, SourceFile};
 use crate::method::MethodError;
 use crate::physics::METHODS;
-use crate::plan::{Evaluation, Named, Plan, Planned, SlotId, SlotRefusal, backward};
+use crate::plan::{Evaluation, Named, Plan, Planned, SlotId, SlotRefusal, Stage, backward};
 use crate::rules::{Facts, Withheld, apply};
 use crate::sheet::{Line, Numbering, Row, lines, register};
-use crate::uncertainty::{Band, Linear, Sampling, Trials, bands, linear, sample};
+use crate::uncertainty::{Band, Sampling, Trials, Wanted, bands, linear, sample};
 use sha2::{Digest, Sha256};
 
 /// What an analysis may be told.
@@ -109,17 +109,22 @@ fn evaluate(case: Case, plan: Plan, options: Options) -> (Analysis, Vec<Notice>)
     let evaluation = plan.evaluate(&plan.estimates());
     let standing: Vec<usize> =
         (0..plan.results.len()).filter(|i| evaluation.value(plan.results[*i].slot).is_some()).collect();
-    let wanted: Vec<SlotId> = standing.iter().map(|i| plan.results[*i].slot).collect();
-    let scales: Vec<f64> = wanted.iter().map(|s| case.identity.system.unit(plan.slot(*s).kind).1).collect();
-    let centres: Vec<f64> = wanted.iter().map(|s| evaluation.values[s.0]).collect();
+    let wanted: Vec<Wanted> = standing
+        .iter()
+        .map(|i| {
+            let Named { slot, stage, .. } = plan.results[*i];
+            let scale = case.identity.system.unit(plan.slot(slot).kind).1;
+            Wanted { slot, stage, centre: evaluation.values[slot.0], scale }
+        })
+        .collect();
     let sampling = if wanted.is_empty() {
         Sampling { trials: 0, impossible: 0, stable: true, results: Vec::new() }
     } else {
-        sample(&plan, &wanted, &centres, &scales, options.seed, options.trials)
+        sample(&plan, &wanted, options.seed, options.trials)
     };
-    let propagated: Vec<Option<Linear>> = wanted.iter().map(|s| linear(&plan, &evaluation, *s)).collect();
+    let propagated = wanted.iter().map(|w| linear(&plan, &evaluation, w.slot)).collect();
     let mut all: Vec<Option<Band>> = vec![None; plan.results.len()];
-    for (index, band) in standing.iter().zip(bands(propagated, &sampling, &scales)) {
+    for (index, band) in standing.iter().zip(bands(propagated, &sampling, &wanted)) {
         all[*index] = band;
     }
     let facts = Facts {
@@ -176,7 +181,7 @@ fn withhold(
         let touches = |w: Withheld| match w {
             Withheld::Nothing => false,
             Withheld::All => true,
-            Withheld::Impact => !named.id.ends_with(".post_impact_speed"),
+            Withheld::Impact => named.stage == Stage::Impact,
         };
         let stop = findings.iter().find(|f| f.notice.severity == Severity::Stop && touches(f.withheld));
         match (band, stop) {
@@ -200,25 +205,35 @@ fn reason(plan: &Plan, evaluation: &Evaluation, slot: SlotId) -> String {
     .unwrap_or_else(|| "too few physically possible trials".into())
 }
 
-/// Puts the case's answers to the warnings they answer; an answer to nothing
-/// is noted, since it may be a slip.
+/// Puts the case's answers to the warnings they answer. An answer to nothing,
+/// or to several warnings at once, answers none and is noted.
 fn answered(mut notices: Notices, case: &Case) -> Notices {
     let mut unused = Vec::new();
     for answer in &case.answers {
-        let mut used = false;
-        for notice in notices.iter_mut().filter(|n| n.code == answer.code && n.severity == Severity::Warn) {
-            notice.answer = Some(format!("{} ({})", answer.reason, answer.by));
-            used = true;
+        let about = |n: &Notice| answer.about.as_ref().is_none_or(|words| n.message.contains(words.as_str()));
+        let mine = |n: &Notice| n.code == answer.code && n.severity == Severity::Warn && about(n);
+        let count = notices.iter().filter(|n| mine(n)).count();
+        if count == 1 {
+            let text = format!("{} ({})", answer.reason, answer.by);
+            for notice in notices.iter_mut().filter(|n| mine(n)) {
+                notice.answer = Some(match notice.answer.take() {
+                    Some(earlier) => format!("{earlier}; {text}"),
+                    None => text.clone(),
+                });
+            }
+            continue;
         }
-        if !used {
-            let stopped = notices.iter().any(|n| n.code == answer.code && n.severity == Severity::Stop);
-            let message = if stopped {
+        let stopped = notices.iter().any(|n| n.code == answer.code && n.severity == Severity::Stop);
+        let message = match (count, stopped) {
+            (0, true) => {
                 format!("the answer to {} has no effect: a STOP cannot be answered away", answer.code)
-            } else {
-                format!("the answer to {} answers no warning of this case", answer.code)
-            };
-            unused.push(Notice::note("CF-10", message).at(answer.place));
-        }
+            }
+            (0, false) => format!("the answer to {} answers no warning of this case", answer.code),
+            _ => format!("the answer to {} fits {count} warnings and answers none of them", answer.code),
+        };
+        let hint = "about = \"words of the warning\" says which one is meant";
+        let notice = Notice::note("CF-10", message).at(answer.place);
+        unused.push(if count > 1 { notice.hint(hint) } else { notice });
     }
     notices.extend(unused);
     notices

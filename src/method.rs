@@ -198,7 +198,7 @@ fn check(card: &'static Card, x: &[f64], y: f64) -> Result<(), Refusal> {
                 _ => continue,
             },
         };
-        if !value.is_nan() && !(value >= limit.lo && value <= limit.hi) {
+        if value < limit.lo || value > limit.hi {
             return Err(Refusal { reason: limit.reason, value, kind });
         }
     }

@@ -16,9 +16,9 @@ use common::{near, outcome, printed, prints};
 use retrodict::diag::Severity;
 use retrodict::formula;
 use retrodict::method::Node;
-use retrodict::plan::{Builder, Input, Plan, Role, SlotId};
+use retrodict::plan::{Builder, Input, Plan, Role, SlotId, Sought, Stage};
 use retrodict::stats::{Dist, TypeA, student_t_two_sided, type_a, welch_satterthwaite};
-use retrodict::uncertainty::{Band, Basis, Linear, Sampled, Trials, bands, linear, sample};
+use retrodict::uncertainty::{Band, Basis, Linear, Sampled, Trials, Wanted, bands, linear, sample};
 
 // ---- Plans by hand ----------------------------------------------------------
 
@@ -47,7 +47,7 @@ fn plan(node: &'static dyn Node, inputs: &[Dist]) -> (Plan, SlotId) {
         .collect();
     b.section("test");
     let out = b.call(node, &slots, "y", "result", None);
-    b.result("y", "result", out);
+    b.result((Sought::ClosingSpeed, Stage::Impact), None, "result", out, None);
     (b.finish(), out)
 }
 
@@ -61,9 +61,10 @@ fn both(node: &'static dyn Node, inputs: &[Dist], trials: u64) -> (Linear, Sampl
     let (plan, out) = plan(node, inputs);
     let evaluation = plan.evaluate(&plan.estimates());
     let line = linear(&plan, &evaluation, out).expect("a value");
-    let sampling = sample(&plan, &[out], &[line.value], &[1.0], 101, Trials::Fixed(trials));
+    let wanted = [Wanted { slot: out, stage: Stage::Impact, centre: line.value, scale: 1.0 }];
+    let sampling = sample(&plan, &wanted, 101, Trials::Fixed(trials));
     assert_eq!((sampling.trials, sampling.impossible), (trials, 0));
-    let band = bands(vec![Some(line.clone())], &sampling, &[1.0]).remove(0).expect("a band");
+    let band = bands(vec![Some(line.clone())], &sampling, &wanted).remove(0).expect("a band");
     (line, sampling.results[0].expect("a distribution"), band)
 }
 
@@ -370,7 +371,7 @@ fn half_width(t: TypeA) -> f64 {
 }
 
 /// Ten pulls of a drag sled: the readings are a published worked sample's
-/// (practice.md section 4, source S3); mean 25.0, s 1.83, t 2.262 at 9 degrees
+/// (Masory & Wright, Statistics, tarorigin.com); mean 25.0, s 1.83, t 2.262 at 9 degrees
 /// of freedom and half-width 1.31 are derived there.
 #[test]
 fn ten_pulls_of_a_sled() {
@@ -405,7 +406,7 @@ fn skids(readings: &str) -> String {
 }
 
 /// A published example took t = 4.30, which is that of three readings, for two
-/// skids (practice.md, source S3a; 12.7 is right); fewer than four are refused (rule B-3; methods 1).
+/// skids (JCGM 100 table G.2 has 12.7); fewer than four are refused (rule B-3).
 #[test]
 fn two_or_three_test_skids_are_refused() {
     prints("t of two", student_t_two_sided(1.0), 1.0, "12.7");
@@ -450,7 +451,8 @@ fn bits(threads: usize, seed: u64) -> (Vec<u64>, String) {
             normal(1.0, 2.0),
         ];
         let (plan, out) = plan(FourSum::NODE, &inputs);
-        let sampling = sample(&plan, &[out], &[1.0], &[1.0], seed, Trials::Fixed(170_000));
+        let wanted = [Wanted { slot: out, stage: Stage::Impact, centre: 1.0, scale: 1.0 }];
+        let sampling = sample(&plan, &wanted, seed, Trials::Fixed(170_000));
         let s = sampling.results[0].unwrap();
         let all = [s.value, s.u, s.low, s.high, s.shortest.0, s.shortest.1].into_iter().chain(s.errors);
         let text = skids("[0.70, 0.72, 0.74, 0.76]");

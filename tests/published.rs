@@ -16,6 +16,8 @@ fn case(head: &str, body: &str) -> String {
     format!("format = 1\n[case]\nnumber = \"P\"\ntitle = \"published example\"\n{head}\n{body}")
 }
 
+const ALONG: &str = "direction = \"along the line\"";
+
 /// One unit of an impact: mass, lines before and lines after.
 fn unit(name: &str, mass: &str, before: &str, after: &str) -> String {
     let mut text = format!("[unit.{name}]\nmass = \"{mass}\"\n[unit.{name}.pre_impact]\n{before}\n");
@@ -187,7 +189,7 @@ fn e02(method: &str, before: [&str; 2], after: [&str; 2]) -> String {
 /// 11.029234, 27.573085 m/s, 456165 and 182466 J; e = 0.4 implied.
 #[test]
 fn e02_from_slide_distance_to_the_speed_of_the_car() {
-    let line = e02("in-line", ["direction = \"along the line\"", "standing = true"], ["", ""]);
+    let line = e02("in-line", ["direction = \"along the line\"", "standing = true"], [ALONG, ALONG]);
     let east = "direction = \"angle 0 deg\"";
     let plane = e02("momentum", [east, "standing = true"], [east, east]);
     for text in [line, plane] {
@@ -208,7 +210,7 @@ fn e02_from_slide_distance_to_the_speed_of_the_car() {
 /// the local value of the case is what is used.
 #[test]
 fn e02_uses_the_gravity_of_the_case() {
-    let text = e02("in-line", ["direction = \"along the line\"", "standing = true"], ["", ""]);
+    let text = e02("in-line", ["direction = \"along the line\"", "standing = true"], [ALONG, ALONG]);
     let standard = text.replace("gravity = \"9.81 m/s²\"", "");
     let ratio = result(&solved(&text), "A.impact_speed") / result(&solved(&standard), "A.impact_speed");
     near("ratio", ratio, (9.81 / G).sqrt(), 1e-12);
@@ -272,8 +274,18 @@ fn the_speed_of_a_unit_against_the_line_is_not_below_zero() {
 #[test]
 fn e06_backward_with_the_oncoming_speed_unknown() {
     let body = [
-        unit("A", "150000 kg", "speed = \"0.300 m/s\"", "speed = \"0.12230769 m/s\""),
-        unit("B", "110000 kg", "direction = \"against the line\"", "speed = \"0.12230769 m/s\""),
+        unit(
+            "A",
+            "150000 kg",
+            "speed = \"0.300 m/s\"",
+            "direction = \"along the line\"\nspeed = \"0.12230769 m/s\"",
+        ),
+        unit(
+            "B",
+            "110000 kg",
+            "direction = \"against the line\"",
+            "direction = \"along the line\"\nspeed = \"0.12230769 m/s\"",
+        ),
         impact("in-line", ""),
     ];
     let a = solved(&case("", &body.concat()));
@@ -312,8 +324,13 @@ fn d1_forward_and_backward_from_each_kind_of_evidence() {
     near("delta-V of B", result(&a, "B.delta_v"), 10_800.0 / 1500.0, 1e-12);
     let back = |before: &str, evidence: &str| {
         let body = [
-            unit("A", "1000 kg", "direction = \"along the line\"", "speed = \"4.2 m/s\""),
-            unit("B", "1500 kg", before, "speed = \"7.2 m/s\""),
+            unit(
+                "A",
+                "1000 kg",
+                "direction = \"along the line\"",
+                "direction = \"along the line\"\nspeed = \"4.2 m/s\"",
+            ),
+            unit("B", "1500 kg", before, "direction = \"along the line\"\nspeed = \"7.2 m/s\""),
             impact("in-line", evidence),
         ];
         solved(&case("", &body.concat()))

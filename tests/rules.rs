@@ -388,12 +388,151 @@ fn a_stop_cannot_be_answered_away() {
 }
 
 #[test]
-fn m13_a_forgotten_stretch_is_found() {
-    // Without its first stretch, B's six metres on the verge cannot take it
-    // from separation to rest, twelve metres apart.
+fn a_forgotten_stretch_is_found() {
     let start = demo().find("[[unit.B.post_impact.travel]]").unwrap();
     let end = demo()[start + 5..].find("[[unit.B.post_impact.travel]]").unwrap() + start + 5;
     let mut seeded = demo();
     seeded.replace_range(start..end, "");
-    fires("STOP M-13", &seeded, &demo());
+    fires("STOP CF-11", &seeded, &demo());
+    let doubled = changed(&demo(), &[("from = \"point 43\"", "from = \"point 42\"")]);
+    fires("STOP CF-11", &doubled, &demo());
+    fires("STOP CF-3", &changed(&demo(), &[("rest = \"point 33\"", "")]), &demo());
+    // In plain lengths the chord tells: B's six metres on the verge cannot take
+    // it from separation to rest, twelve metres apart.
+    let plain = changed(&seeded, &[("from = \"point 43\"\nto = \"point 44\"", "distance = \"6 m\"")]);
+    fires("STOP M-13", &plain, &demo());
+    fires("WARN M-13", &plain.replace("distance = \"6 m\"", "distance = \"60 m\""), &demo());
+}
+
+#[test]
+fn m3_a_path_that_turns_back_is_found() {
+    fires(
+        "WARN M-3",
+        &changed(
+            &demo(),
+            &[
+                ("[\"point 42\", \"point 43\"]", "[\"point 43\", \"point 42\"]"),
+                ("to = \"point 43\"", "to = \"point 42\""),
+                ("from = \"point 43\"", "from = \"point 42\""),
+            ],
+        ),
+        &demo(),
+    );
+}
+
+#[test]
+fn m12_a_known_speed_that_does_not_close_is_found() {
+    let known = |speed: &str| {
+        changed(&demo(), &[("[unit.B.pre_impact]\n", &format!("[unit.B.pre_impact]\nspeed = \"{speed}\"\n"))])
+    };
+    fires("WARN M-12", &known("90 ± 2 km/h (95 %)"), &known("40 ± 2 km/h (95 %)"));
+}
+
+#[test]
+fn m12_energy_and_restitution_that_contradict_the_separation_are_found() {
+    let base =
+        text("cases/in-line-standing.toml").replace("standing = true", "direction = \"along the line\"");
+    let with = |kj: &str| {
+        base.clone() + &format!("restitution = \"0.115 ± 0.02\"\nabsorbed_energy = \"{kj} kJ ± 4 %\"\n")
+    };
+    fires("WARN M-12", &with("400"), &with("104"));
+}
+
+#[test]
+fn p6_evidence_that_nothing_uses_is_named() {
+    let case = text("cases/in-line-standing.toml");
+    fires("WARN P-6", &(case.clone() + "restitution = \"0.40..0.60\"\n"), &case);
+    fires("WARN P-6", &(case.clone() + "absorbed_energy = \"300 ± 15 kJ\"\n"), &case);
+    fires(
+        "WARN P-6",
+        &changed(&demo(), &[("method = \"momentum\"", "method = \"momentum\"\nrestitution = \"0.1\"")]),
+        &demo(),
+    );
+    let changed_error = demo() + "\n[method_error.skid]\nvalue = \"1 ± 0.02 (1 sd)\"\nreason = \"x\"\n";
+    fires("WARN P-6", &changed_error, &demo());
+}
+
+#[test]
+fn d6_locked_and_abs_are_not_the_same_friction() {
+    fires("WARN D-6", &changed(&demo(), &[("wheels = \"all locked\"", "wheels = \"abs\"")]), &demo());
+}
+
+#[test]
+fn p4_a_contradiction_in_one_unit_leaves_no_result_of_the_impact() {
+    let outcome =
+        fires("STOP P-4", &changed(&demo(), &[("bearing 0 ± 2 deg", "bearing 180 ± 2 deg")]), &demo());
+    for id in ["A.impact_speed", "B.impact_speed", "closing_speed", "A.delta_v", "A.speed_at_start_of_marks"]
+    {
+        assert!(!has(&outcome, id), "{id}");
+    }
+    assert!(has(&outcome, "A.post_impact_speed") && has(&outcome, "B.post_impact_speed"));
+}
+
+#[test]
+fn p7_a_case_without_a_question_to_answer_is_refused() {
+    let empty = "format = 1\n[case]\nnumber = \"1\"\ntitle = \"x\"\n[unit.A]\n[unit.A.to_rest]\n";
+    fires("STOP P-7", empty, &demo());
+}
+
+#[test]
+fn on_one_line_every_sense_is_stated_and_the_first_unit_gives_the_line() {
+    let case = text("cases/in-line-standing.toml");
+    let missing =
+        case.replacen("[unit.A.post_impact]\ndirection = \"along the line\"\n", "[unit.A.post_impact]\n", 1);
+    fires("STOP P-2", &missing, &case);
+    let against = case.replacen("direction = \"along the line\"", "direction = \"against the line\"", 1);
+    let outcome = fires("STOP P-2", &against, &case);
+    assert!(said(&outcome).contains("named first"));
+}
+
+/// A friction test may have any name: it must not meet the program's own
+/// variables.
+#[test]
+fn names_of_the_case_do_not_collide_with_the_programs_own() {
+    let named = demo().replace("F1", "0");
+    for id in ["A.impact_speed", "A.speed_at_start_of_marks"] {
+        common::near(id, common::value(&run(&named), id), common::value(&run(&demo()), id), 1e-12);
+    }
+}
+
+/// Entries: what must be refused rather than guessed.
+#[test]
+fn entries_that_can_be_read_two_ways_are_refused() {
+    let rows: &[(&str, &str, &str)] = &[
+        ("STOP CF-6", "\"0.42 ± 0.08 (95 %)\"", "\"0.42 ± 10 % (95 %)\""),
+        ("STOP CF-5", "\"12.4 ± 0.3 m (95 %)\"", "\"12.4(0.3) m\""),
+        ("STOP CF-5", "\"12.4 ± 0.3 m (95 %)\"", "\"1.24e1(3) m\""),
+        ("STOP D-2", "\"up 1.5 ± 0.3 % (95 %)\"", "\"down -1.5 %\""),
+        ("STOP CF-4", "\"up 1.5 ± 0.3 % (95 %)\"", "true"),
+        ("STOP B-3", "\"0.42 ± 0.08 (95 %)\"", "[0.42, 0.42, 0.42, 0.42]"),
+        ("STOP CF-4", "source = \"two dark skids, photo 14, tape\"", "source = 5"),
+    ];
+    for (notice, from, to) in rows {
+        fires(notice, &changed(&demo(), &[(from, to)]), &demo());
+    }
+    let factor = demo() + "\n[method_error.post_impact_drag]\nvalue = \"3 %\"\nreason = \"x\"\n";
+    let fine = factor.replace("3 %", "1 ± 0.03 (1 sd)");
+    fires("STOP CF-8", &factor, &fine);
+}
+
+#[test]
+fn an_answer_says_which_of_several_warnings_it_is_about() {
+    let two = changed(
+        &demo(),
+        &[
+            ("path = [\"point 32\"]\n", ""),
+            ("path = [\"point 42\", \"point 43\"]\n", ""),
+            ("from = \"point 41\"\nto = \"point 43\"", "distance = \"6 m\""),
+            ("from = \"point 43\"\nto = \"point 44\"", "distance = \"6.1 m\""),
+        ],
+    );
+    let answer = "\n[[answer]]\ncode = \"M-3\"\nreason = \"no mark between\"\nby = \"me\"\n";
+    let outcome = run(&(two.clone() + answer));
+    assert!(said(&outcome).contains("fits 2 warnings"), "{}", said(&outcome));
+    let about = answer.replace("reason", "about = \"direction of A\"\nreason");
+    let outcome = run(&(two + &about));
+    let answered = outcome.notices.iter().filter(|n| n.answer.is_some()).count();
+    assert_eq!((answered, outcome.status()), (1, 1), "{}", said(&outcome));
+    let empty = demo() + &answer.replace("no mark between", "");
+    fires("STOP CF-3", &empty, &demo());
 }

@@ -29,7 +29,7 @@ pub(super) fn number(piece: Piece<'_>) -> Result<(Number, Piece<'_>), Fault> {
     if rest.starts_with(',') && rest[1..].starts_with(|c: char| c.is_ascii_digit()) {
         let mut fault =
             piece.fault(UNREADABLE, "a comma inside a number", "a decimal point and no thousands mark");
-        fault.hint = Some(format!("write {} or leave the comma out", piece.text.replace(',', ".")));
+        fault.hint = Some("write a decimal comma as a point, and leave a thousands comma out".into());
         return Err(fault);
     }
     let (last_digit, used) = in_last_digit(&digits, rest, piece)?;
@@ -71,11 +71,13 @@ fn number_end(text: &str) -> usize {
 fn in_last_digit(digits: &str, rest: &str, piece: Piece<'_>) -> Result<(Option<f64>, usize), Fault> {
     let Some(inside) = rest.strip_prefix('(') else { return Ok((None, 0)) };
     let parsed = inside.split_once(')').and_then(|(n, _)| Some((n.parse::<f64>().ok()?, n.len())));
-    let Some((count, length)) = parsed.filter(|(n, _)| n.is_finite() && *n > 0.0) else {
+    let plain = |n: f64, length: usize| n > 0.0 && inside[..length].bytes().all(|b| b.is_ascii_digit());
+    let in_digits = !digits.contains(['e', 'E']);
+    let Some((count, length)) = parsed.filter(|(n, length)| in_digits && plain(*n, *length)) else {
         return Err(piece.fault(
             UNREADABLE,
             "brackets on a number hold the standard uncertainty of its last digit",
-            "such as 18.4(3) m",
+            "whole digits after a plain number, such as 18.4(3) m; else write 18.4 ± 0.3 m (1 sd)",
         ));
     };
     let decimals = digits.split_once('.').map_or(0, |(_, d)| d.len());

@@ -13,7 +13,7 @@ mod notation;
 mod raw;
 mod survey;
 
-pub use check::{Checked, Load, read};
+pub use check::{Checked, LARGEST, Load, read};
 pub use model::{
     Answer, Begin, Braking, Case, Direction, Drag, End, Entry, ErrorChange, FrictionTest, Identity, Impact,
     ImpactMethod, Phase, Point, PointId, StandsFor, Stretch, StretchLength, TestId, Unit, UnitId,

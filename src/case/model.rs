@@ -283,6 +283,8 @@ pub struct ErrorChange {
 pub struct Answer {
     /// The warning's code.
     pub code: String,
+    /// Words of the warning it is about, where several carry the code.
+    pub about: Option<String>,
     /// Why the result stands all the same.
     pub reason: String,
     /// Who says so.

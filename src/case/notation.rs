@@ -112,7 +112,30 @@ impl<'a> Piece<'a> {
 /// of its own means, if the case declares that.
 pub fn quantity(text: &str, kind: Kind, default: Option<Spread>) -> Result<Dist, Fault> {
     let whole = trim(Piece { text, from: 0 });
-    let dist = written(whole, kind, default)?;
+    if kind == Kind::Ratio
+        && let Some((at, length)) = find_plus_minus(whole.text)
+        && whole.text[at + length..].replace("95 %", "").replace("95%", "").contains('%')
+        && !whole.text[..at].contains('%')
+    {
+        let mut fault = whole.fault(
+            WRONG_UNIT,
+            "% after the ± alone can be a share of the value or points",
+            "both in the same unit",
+        );
+        fault.hint = Some("write 0.42 ± 0.04 (95 %), or 42 ± 4 % as 42 % ± 4 % (95 %)".into());
+        return Err(fault);
+    }
+    in_bounds(written(whole, kind, default)?, whole)
+}
+
+/// Reads a grade's steepness, where `1.5 ± 0.3 %` is the usual notation and %
+/// belongs to both.
+pub(super) fn steepness(text: &str, default: Option<Spread>) -> Result<Dist, Fault> {
+    let whole = trim(Piece { text, from: 0 });
+    in_bounds(written(whole, Kind::Ratio, default)?, whole)
+}
+
+fn in_bounds(dist: Dist, whole: Piece<'_>) -> Result<Dist, Fault> {
     // Finite numbers may still overflow with their unit's factor.
     if dist.estimate().is_finite() && dist.u().is_finite() {
         Ok(dist)

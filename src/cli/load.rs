@@ -1,12 +1,10 @@
 //! Reads a case and the files it names; shows what there is to say.
 
 use crate::analysis::{Options, Outcome, analyse};
+use crate::case::LARGEST;
 use crate::report::terminal;
 use std::io::{IsTerminal, Write};
 use std::path::Path;
-
-/// Largest file that is read, bytes: more is no case file.
-const LARGEST: u64 = 64 << 20;
 
 /// Reads and analyses the case file; says on standard error why it cannot be
 /// read.
@@ -25,7 +23,14 @@ pub(super) fn load(path: &Path, options: Options) -> Option<Outcome> {
         if !plain || name.is_empty() {
             return Err(format!("'{name}' is not the name of a file beside the case file"));
         }
-        read(&folder.join(name))
+        let file = folder.join(name);
+        // A link that leads elsewhere is not beside the case either.
+        let place = |p: &Path| p.canonicalize().ok().and_then(|p| p.parent().map(Path::to_path_buf));
+        let here = if folder.as_os_str().is_empty() { Path::new(".") } else { folder };
+        if file.exists() && place(&file) != here.canonicalize().ok() {
+            return Err(format!("'{name}' leads to a file that is not beside the case file"));
+        }
+        read(&file)
     };
     Some(analyse(&path.to_string_lossy(), &text, &beside, options))
 }
@@ -36,7 +41,10 @@ fn read(path: &Path) -> Result<String, String> {
     if size.is_dir() {
         return Err(format!("{name} is a folder"));
     }
-    if size.len() > LARGEST {
+    if !size.is_file() {
+        return Err(format!("{name} is not a file"));
+    }
+    if size.len() > LARGEST as u64 {
         return Err(format!("{name} has {} bytes; is it a case file?", size.len()));
     }
     let bytes = std::fs::read(path).map_err(|e| format!("{name}: {e}"))?;

@@ -7,6 +7,12 @@ use std::io::Write;
 use std::path::{Path, PathBuf};
 
 pub(super) fn run(args: &PrintArgs) -> u8 {
+    if let Some(folder) = args.output.as_deref().and_then(Path::parent).filter(|p| !p.as_os_str().is_empty())
+        && !folder.is_dir()
+    {
+        say(&format!("STOP: nothing was written: there is no folder {}\n", folder.display()));
+        return 2;
+    }
     let Some(outcome) = load(&args.case, args.draws.options()) else { return 2 };
     show_notices(&outcome);
     let Some(document) = compose(&outcome) else {

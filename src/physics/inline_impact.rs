@@ -35,13 +35,13 @@ const E_RANGE: &str = "restitution lies between 0 (common velocity) and 1 (elast
 /// The formulas of this family.
 pub const FORMULAS: &[&dyn Node] = &[
     Reversed::NODE,
-    RoadTakenOut::NODE,
     AfterFirst::NODE,
     AfterSecond::NODE,
     ClosingFromSeparation::NODE,
     ClosingFromEnergy::NODE,
     ClosingFromDeltaVs::NODE,
     DeltaVMismatch::NODE,
+    SeparationMismatch::NODE,
     BeforeFirst::NODE,
     BeforeSecond::NODE,
     BeforeKnownPartner::NODE,
@@ -58,16 +58,6 @@ formula! {
     undefined "the speed is not a number";
     source "sign convention";
     = -v
-}
-
-formula! {
-    /// Velocity after impact without what the road added during contact.
-    RoadTakenOut, "road-taken-out", "in-line", "Velocity after impact, the road's impulse taken out";
-    in v: Speed "v′" "velocity after impact along the line", d: Speed "δ" "velocity change by the road";
-    out Speed "w" "velocity after impact without it";
-    undefined "the velocities give no difference";
-    source "conservation of momentum";
-    = v - d
 }
 
 formula! {
@@ -141,6 +131,18 @@ formula! {
     undefined "masses and delta-Vs give no impulse";
     source "Newton's third law: m₁ ΔV₁ = m₂ ΔV₂ in size";
     = m1 * k1 * d1 - m2 * k2 * d2
+}
+
+formula! {
+    /// Difference between the separation speed and what restitution and
+    /// closing speed make of it; it should be none.
+    SeparationMismatch, "separation-mismatch", "in-line", "Difference of the separation speeds";
+    in w1: Speed "v′_{1}" "velocity of the first after", w2: Speed "v′_{2}" "velocity of the second after",
+       e: Ratio "e" "restitution", closing: Speed "V_{c}" "closing speed";
+    out Speed "Δ" "difference; should be zero";
+    undefined "the velocities give no difference";
+    source "Newton's law of impact";
+    = w2 - w1 - e * closing
 }
 
 formula! {

@@ -10,6 +10,7 @@
 //! reference values.
 
 pub mod braking;
+pub mod contact;
 pub mod inline_impact;
 pub mod mass;
 pub mod momentum;
@@ -21,10 +22,24 @@ use crate::method::{Method, Node};
 pub const STANDARD_GRAVITY: f64 = 9.80665;
 
 /// Every method.
-pub const METHODS: &[&Method] =
-    &[&braking::METHOD, &mass::METHOD, &path::METHOD, &momentum::METHOD, &inline_impact::METHOD];
+pub const METHODS: &[&Method] = &[
+    &braking::METHOD,
+    &mass::METHOD,
+    &path::METHOD,
+    &contact::METHOD,
+    &momentum::METHOD,
+    &inline_impact::METHOD,
+];
 
 /// Every formula, by family.
 pub fn formulas() -> Vec<&'static dyn Node> {
-    [braking::FORMULAS, mass::FORMULAS, path::FORMULAS, momentum::FORMULAS, inline_impact::FORMULAS].concat()
+    [
+        braking::FORMULAS,
+        mass::FORMULAS,
+        path::FORMULAS,
+        contact::FORMULAS,
+        momentum::FORMULAS,
+        inline_impact::FORMULAS,
+    ]
+    .concat()
 }

@@ -5,9 +5,7 @@
 //! force came from, clockwise from straight ahead (SAE J224).
 
 use crate::formula;
-use crate::method::{Limit, Method, MethodError, Node};
-use crate::stats::Dist;
-use crate::units::Kind;
+use crate::method::{Limit, Method, Node};
 
 /// The method's card.
 pub const METHOD: Method = Method {
@@ -19,31 +17,11 @@ pub const METHOD: Method = Method {
             worse: errors grow as 1/|sin(α₂ − α₁)|.",
     source: "Conservation of momentum; Brach & Brach, Vehicle Accident Analysis and Reconstruction Methods (SAE), \
              from memory",
-    errors: &[ROAD_TIME, ROAD_SHARE],
-};
-
-/// Duration of contact, for the road's impulse.
-pub const ROAD_TIME: MethodError = MethodError {
-    id: "contact_time",
-    title: "duration of contact, while the tyres keep pushing",
-    // As a rectangle the standard deviation is 0.04 s and zero is out of reach.
-    dist: Dist::Rectangular { lo: 0.03, hi: 0.17 },
-    kind: Kind::Time,
-    source: "contacts last 55 to 160 ms in crashes simulated in a general rigid-body library; starting value",
-};
-
-/// The road's impulse in units of ½ μ g τ.
-pub const ROAD_SHARE: MethodError = MethodError {
-    id: "road_impulse",
-    title: "road's impulse during contact, in units of ½ μ g τ",
-    dist: Dist::Normal { mean: 0.0, sd: 1.0 },
-    kind: Kind::Ratio,
-    source: "the tyres can push with at most μ g for the time of contact; half of it as one standard deviation",
+    errors: &[],
 };
 
 /// The formulas of this family.
 pub const FORMULAS: &[&dyn Node] = &[
-    RoadImpulse::NODE,
     ComponentX::NODE,
     ComponentY::NODE,
     MomentumSum::NODE,
@@ -52,25 +30,12 @@ pub const FORMULAS: &[&dyn Node] = &[
     ApproachSpeedKnownPartner::NODE,
     ApproachSpeedStandingPartner::NODE,
     MomentumAcross::NODE,
-    VelocityChange::NODE,
-    VectorSize::NODE,
+    MomentumAcrossKnownPartner::NODE,
     ForceDirection::NODE,
     ClosingSpeed::NODE,
     EnergyLost::NODE,
     ImpliedRestitution::NODE,
 ];
-
-formula! {
-    /// Velocity that the road's friction may give or take during contact.
-    RoadImpulse, "road-impulse", "momentum", "Velocity change by the road during contact";
-    in z: Ratio "z" "share, in units of ½ μ g τ", mu: Ratio "μ" "friction", g: Acceleration "g" "gravity",
-       tau: Time "τ" "duration of contact";
-    out Speed "δ" "velocity change by the road";
-    limits &[Limit::input(3, 0.0, f64::INFINITY, "a contact does not last less than no time")];
-    undefined "the road's impulse is not a number";
-    source "impulse of friction: at most μ g τ a unit of mass";
-    = R::of(0.5) * z * mu * g * tau
-}
 
 formula! {
     /// East component of a velocity.
@@ -164,26 +129,6 @@ formula! {
 }
 
 formula! {
-    /// One component of delta-V.
-    VelocityChange, "velocity-change", "momentum", "Delta-V, one component";
-    in after: Speed "v′" "component after impact", before: Speed "v" "component before impact";
-    out Speed "ΔV" "component of delta-V";
-    undefined "the velocities give no difference";
-    source "definition of delta-V: vector change of velocity over the contact";
-    = after - before
-}
-
-formula! {
-    /// Size of a vector.
-    VectorSize, "vector-size", "momentum", "Delta-V";
-    in x: Speed "ΔV_{x}" "east component", y: Speed "ΔV_{y}" "north component";
-    out Speed "ΔV" "delta-V";
-    undefined "the components give no size";
-    source "plane geometry";
-    = (x.squared() + y.squared()).sqrt()
-}
-
-formula! {
     /// Principal direction of force, clockwise from straight ahead.
     ForceDirection, "force-direction", "momentum", "Principal direction of force";
     in x: Speed "ΔV_{x}" "delta-V, east", y: Speed "ΔV_{y}" "delta-V, north", heading: Angle "ψ" "heading";
@@ -191,6 +136,19 @@ formula! {
     undefined "without a change of velocity there is no direction of force";
     source "SAE J224: direction of −ΔV against the heading, clockwise seen from above";
     = (y * heading.cos() - x * heading.sin()).atan2(-(x * heading.cos() + y * heading.sin()))
+}
+
+formula! {
+    /// Momentum across a course, the partner's share taken out: zero when the
+    /// partner's velocity is right.
+    MomentumAcrossKnownPartner, "momentum-across-known-partner", "momentum", "Momentum across the course of the unknown speed";
+    in px: Momentum "P_{x}" "momentum, east", py: Momentum "P_{y}" "momentum, north",
+       own: Angle "α_{1}" "approach course of the unknown speed", mo: Mass "m_{2}" "the partner's mass",
+       vo: Speed "v_{2}" "the partner's speed", other: Angle "α_{2}" "the partner's approach course";
+    out Momentum "P_{q}" "momentum across, + to the left; should be zero";
+    undefined "momentum and courses give no component";
+    source "conservation of momentum across the unit's course";
+    = py * own.cos() - px * own.sin() - mo * vo * (other - own).sin()
 }
 
 formula! {

@@ -14,7 +14,7 @@ pub const METHOD: Method = Method {
 };
 
 /// The formulas of this family.
-pub const FORMULAS: &[&dyn Node] = &[Leg::NODE, LongerPath::NODE, Course::NODE];
+pub const FORMULAS: &[&dyn Node] = &[Leg::NODE, LongerPath::NODE, SlopeLength::NODE, Course::NODE];
 
 formula! {
     /// Straight distance between two points.
@@ -35,6 +35,16 @@ formula! {
     undefined "the pieces give no sum";
     source "plane geometry";
     = so_far + piece
+}
+
+formula! {
+    /// Length along the slope of a stretch surveyed in plan.
+    SlopeLength, "slope-length", "path", "Length along the slope";
+    in plan: Length "d_{p}" "length in plan", grade: Ratio "G" "grade, rise over run";
+    out Length "d" "length along the slope";
+    undefined "length and grade give no length";
+    source "plane geometry";
+    = plan * (R::of(1.0) + grade.squared()).sqrt()
 }
 
 formula! {

@@ -4,12 +4,30 @@
 //! gives the speeds before it; marks before impact give the speed at their
 //! start.
 
-use super::{Builder, Plan, Planned, Role, SlotId, impact_inline, impact_momentum, travel};
-use crate::case::{Begin, Case, Direction, End, ImpactMethod, Phase, PointId, Unit, UnitId};
+use super::{Builder, Plan, Planned, Role, SlotId, Sought, Stage, impact_inline, impact_momentum, travel};
+use crate::case::{Begin, Case, Direction, End, ImpactMethod, Phase, PointId, TestId, Unit, UnitId};
 use crate::diag::{Notice, Notices};
 use crate::method::MethodError;
 use crate::physics::{STANDARD_GRAVITY, mass, path};
 use crate::units::Kind;
+
+/// What several lines use and must be one slot. Kept apart from symbols, which
+/// are made of the case's own words.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(super) enum Shared {
+    /// Friction of a test.
+    Friction(TestId),
+    /// Method error of skids on a test's surface.
+    Skid(TestId),
+    /// Method error of travel after impact on a test's surface.
+    Travel(TestId),
+    /// Duration of contact.
+    ContactTime,
+    /// Friction taken for the road's impulse where none is tested.
+    UsualFriction,
+    /// A factor of one.
+    One,
+}
 
 /// A plan under construction, with the slots that are shared by reference.
 pub(super) struct Backward<'a> {
@@ -19,7 +37,7 @@ pub(super) struct Backward<'a> {
     pub(super) gravity: SlotId,
     points: Vec<Option<[SlotId; 2]>>,
     masses: Vec<Option<SlotId>>,
-    shared: Vec<(String, SlotId)>,
+    shared: Vec<(Shared, SlotId)>,
 }
 
 /// Compiles a case. What the case lacks for a step becomes a notice; the steps
@@ -101,6 +119,10 @@ impl<'a> Backward<'a> {
                 ImpactMethod::InLine => impact_inline::plan(self, impact, &separation),
             }
         }
+        if self.b.plan.results.is_empty() && !self.notices.any_stop() {
+            let notice = Notice::stop("P-7", "the case gives nothing to work out");
+            self.notices.push(notice.expected("a unit's travel, or an impact with what it needs"));
+        }
     }
 
     fn refuse_fixed(&mut self, unit: UnitId, place: crate::diag::Place) {
@@ -122,23 +144,18 @@ impl<'a> Backward<'a> {
             None if phase.travel.is_empty() => return None,
             None => travel::chain(self, unit, phase, None)?,
         };
-        self.b.result(
-            format!("{}.post_impact_speed", unit.id),
-            format!("Speed of {} after impact", unit.id),
-            speed,
-        );
+        let label = format!("Speed of {} after impact", unit.id);
+        self.b.result((Sought::PostImpactSpeed, Stage::Travel), Some(&unit.id), label, speed, None);
         Some(speed)
     }
 
     fn alone(&mut self, unit: &Unit, phase: &Phase) {
         self.b.section(format!("{}: braking to rest", title(unit)));
         if let Some(speed) = travel::chain(self, unit, phase, None) {
-            self.b.result_with(
-                format!("{}.speed_at_start_of_marks", unit.id),
-                format!("Speed of {} at the start of its marks (a minimum)", unit.id),
-                speed,
-                "a minimum: braking before the first visible mark is not counted, nor what happened after the last",
-            );
+            let label = format!("Speed of {} at the start of its marks (a minimum)", unit.id);
+            let remark = "a minimum: braking before the first visible mark is not counted, nor what happened after the last";
+            let what = (Sought::SpeedAtStartOfMarks, Stage::Travel);
+            self.b.result(what, Some(&unit.id), label, speed, Some(remark));
         }
     }
 
@@ -147,12 +164,11 @@ impl<'a> Backward<'a> {
         let Some(phase) = before(unit).filter(|p| !p.travel.is_empty()) else { return };
         self.b.section(format!("{}: marks before impact", title(unit)));
         if let Some(speed) = travel::chain(self, unit, phase, Some(impact_speed)) {
-            self.b.result_with(
-                format!("{}.speed_at_start_of_marks", unit.id),
-                format!("Speed of {} at the start of its marks (a minimum)", unit.id),
-                speed,
-                "a minimum for the onset of braking: braking before the first visible mark is not counted",
-            );
+            let label = format!("Speed of {} at the start of its marks (a minimum)", unit.id);
+            let remark =
+                "a minimum for the onset of braking: braking before the first visible mark is not counted";
+            let what = (Sought::SpeedAtStartOfMarks, Stage::Impact);
+            self.b.result(what, Some(&unit.id), label, speed, Some(remark));
         }
     }
 
@@ -199,33 +215,27 @@ impl<'a> Backward<'a> {
         Some(slot)
     }
 
-    /// A method error, shared under its symbol: the case's own value where it
-    /// changes it.
+    /// A method error as a variable: the case's own value where it changes it.
     pub(super) fn method_error(&mut self, symbol: String, error: &MethodError, whose: &str) -> SlotId {
-        if let Some(slot) = self.shared(&symbol) {
-            return slot;
-        }
-        let slot = match self.case.error_changes.iter().find(|c| c.id == error.id) {
-            None => self.b.method_error(symbol.clone(), error, whose),
+        match self.case.error_changes.iter().find(|c| c.id == error.id) {
+            None => self.b.method_error(symbol, error, whose),
             Some(change) => {
                 let mut entry = change.entry.clone();
                 entry.name = format!("method error, changed by the case: {}{whose}", error.title);
                 entry.note = Some(change.reason.clone());
-                self.b.entry(symbol.clone(), &entry, Role::MethodError)
+                self.b.entry(symbol, &entry, Role::MethodError)
             }
-        };
-        self.share(symbol, slot);
+        }
+    }
+
+    /// The slot of something shared, made at its first use.
+    pub(super) fn shared(&mut self, what: Shared, make: impl FnOnce(&mut Self) -> SlotId) -> SlotId {
+        if let Some((_, slot)) = self.shared.iter().find(|(known, _)| *known == what) {
+            return *slot;
+        }
+        let slot = make(self);
+        self.shared.push((what, slot));
         slot
-    }
-
-    /// A slot that was shared under this name.
-    pub(super) fn shared(&self, name: &str) -> Option<SlotId> {
-        self.shared.iter().find(|(n, _)| n == name).map(|(_, slot)| *slot)
-    }
-
-    /// Shares a slot under a name.
-    pub(super) fn share(&mut self, name: String, slot: SlotId) {
-        self.shared.push((name, slot));
     }
 
     /// A direction as a slot; `None` for words that only in-line impacts know.

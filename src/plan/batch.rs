@@ -16,8 +16,6 @@ pub struct Block {
     trig: Vec<usize>,
     /// Which calls are run: those that a result needs.
     live: Vec<bool>,
-    /// Trials in which every line that was run gave a number.
-    possible: [bool; WIDTH],
 }
 
 impl Block {
@@ -40,7 +38,6 @@ impl Block {
             cosines: vec![[1.0; WIDTH]; count],
             trig,
             live,
-            possible: [true; WIDTH],
         }
     }
 
@@ -59,9 +56,7 @@ impl Block {
 
     /// Computes every line for the drawn inputs.
     pub fn compute(&mut self, plan: &Plan) {
-        self.possible = [true; WIDTH];
         for input in &plan.inputs {
-            self.note_impossible(input.slot);
             self.prepare_angle(input.slot);
         }
         for (index, call) in plan.calls.iter().enumerate() {
@@ -72,7 +67,6 @@ impl Block {
             let columns: Vec<Column<'_>> = call.ins.iter().map(|slot| self.column(*slot)).collect();
             call.node.batch(&columns, &mut out);
             self.values[call.out.0] = out;
-            self.note_impossible(call.out);
             self.prepare_angle(call.out);
         }
     }
@@ -80,12 +74,6 @@ impl Block {
     fn column(&self, slot: SlotId) -> Column<'_> {
         let trig = self.trig[slot.0];
         Column { value: &self.values[slot.0], sin: &self.sines[trig], cos: &self.cosines[trig] }
-    }
-
-    fn note_impossible(&mut self, slot: SlotId) {
-        for (possible, value) in self.possible.iter_mut().zip(&self.values[slot.0]) {
-            *possible &= value.is_finite();
-        }
     }
 
     fn prepare_angle(&mut self, slot: SlotId) {
@@ -99,13 +87,8 @@ impl Block {
         }
     }
 
-    /// The trials of a slot.
+    /// The trials of a slot; not finite where a line on the way to it refused.
     pub fn trials(&self, slot: SlotId) -> &Lanes {
         &self.values[slot.0]
-    }
-
-    /// Which trials are physically possible.
-    pub fn possible(&self) -> &[bool; WIDTH] {
-        &self.possible
     }
 }

@@ -1,6 +1,6 @@
 //! Builds a plan slot by slot.
 
-use super::{Call, Input, Named, Origin, Plan, Role, Slot, SlotId};
+use super::{Call, Input, Named, Origin, Plan, Role, Slot, SlotId, Sought, Stage};
 use crate::case::Entry;
 use crate::diag::Place;
 use crate::method::{MethodError, Node};
@@ -101,14 +101,18 @@ impl Builder {
         out
     }
 
-    /// Names a slot as a result.
-    pub fn result(&mut self, id: impl Into<String>, label: impl Into<String>, slot: SlotId) {
-        self.plan.results.push(Named { id: id.into(), label: label.into(), slot, remark: None });
-    }
-
-    /// Names a slot as a result with a remark that must go with it.
-    pub fn result_with(&mut self, id: String, label: String, slot: SlotId, remark: &'static str) {
-        self.plan.results.push(Named { id, label, slot, remark: Some(remark) });
+    /// Names a slot as a result; the stable name follows from what it is.
+    pub fn result(
+        &mut self,
+        (sought, stage): (Sought, Stage),
+        unit: Option<&str>,
+        label: impl Into<String>,
+        slot: SlotId,
+        remark: Option<&'static str>,
+    ) {
+        let id = unit.map_or(sought.word().to_string(), |unit| format!("{unit}.{}", sought.word()));
+        let unit = unit.map(str::to_string);
+        self.plan.results.push(Named { sought, stage, unit, id, label: label.into(), slot, remark });
     }
 
     /// The finished plan.

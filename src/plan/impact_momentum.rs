@@ -1,11 +1,11 @@
 //! Plans an oblique impact of two units as points.
 
-use super::backward::{Backward, after, before};
-use super::{Departure, MomentumSlots, Role, SlotId, travel};
+use super::backward::{Backward, Shared, after, before};
+use super::{Departure, MomentumSlots, Role, SlotId, Sought, Stage, travel};
 use crate::case::{Direction, Impact, Phase, Unit};
 use crate::diag::{Notice, Place};
 use crate::method::Node;
-use crate::physics::{momentum, path};
+use crate::physics::{contact, momentum, path};
 use crate::units::Kind;
 
 /// Friction taken for the road's impulse where no tested surface is stated
@@ -172,10 +172,10 @@ fn components(
 /// What the road may have added to a unit's velocity during contact: method
 /// errors, zero at their best estimates.
 pub(super) fn road_impulse(w: &mut Backward<'_>, unit: &Unit, axis: &str, along: &str) -> SlotId {
-    let tau = w.method_error("τ".into(), &momentum::ROAD_TIME, "");
+    let tau = w.shared(Shared::ContactTime, |w| w.method_error("τ".into(), &contact::ROAD_TIME, ""));
     let z = w.method_error(
         format!("z_{{{}{axis}}}", unit.id),
-        &momentum::ROAD_SHARE,
+        &contact::ROAD_SHARE,
         &format!(", on {} {along}", unit.id),
     );
     let mu = match after(unit).and_then(|phase| travel::first_friction(w, phase)) {
@@ -184,7 +184,7 @@ pub(super) fn road_impulse(w: &mut Backward<'_>, unit: &Unit, axis: &str, along:
     };
     let g = w.gravity;
     w.b.call(
-        momentum::RoadImpulse::NODE,
+        contact::RoadImpulse::NODE,
         &[z, mu, g, tau],
         format!("δ_{{{}{axis}}}", unit.id),
         format!("Velocity change of {} by the road during contact, {along}", unit.id),
@@ -193,19 +193,10 @@ pub(super) fn road_impulse(w: &mut Backward<'_>, unit: &Unit, axis: &str, along:
 }
 
 fn usual_friction(w: &mut Backward<'_>) -> SlotId {
-    if let Some(slot) = w.shared("μ_{0}") {
-        return slot;
-    }
-    let name = "friction taken for the road's impulse during contact";
-    let slot = w.b.assumed(
-        "μ_{0}",
-        Kind::Ratio,
-        USUAL_FRICTION,
-        name,
-        "common practice; scales a method error only",
-    );
-    w.share("μ_{0}".into(), slot);
-    slot
+    w.shared(Shared::UsualFriction, |w| {
+        let name = "friction taken for the road's impulse during contact";
+        w.b.assumed("μ_{0}", Kind::Ratio, USUAL_FRICTION, name, "common practice; scales a method error only")
+    })
 }
 
 fn momentum_sums(
@@ -299,6 +290,14 @@ fn known_partner(
     [px, py]: [SlotId; 2],
     place: Place,
 ) -> SlotId {
+    let ins = [px, py, own, partner.mass, speed, course];
+    let title = format!("Momentum across the course of {} (should be zero)", mover.unit.id);
+    let across = w.b.call(momentum::MomentumAcrossKnownPartner::NODE, &ins, "P_{q}", title, Some(place));
+    w.b.plan.watch.zeros.push((
+        across,
+        "momentum does not close: what the two units brought across the course of the one with the unknown speed is \
+         not what they took away; the known speed, directions, masses or speeds after impact contradict each other",
+    ));
     let ins = [px, py, mover.mass, own, partner.mass, speed, course];
     unknown_speed(w, mover, momentum::ApproachSpeedKnownPartner::NODE, &ins, place)
 }
@@ -344,11 +343,9 @@ fn outcome(
         }
     });
     for i in [0, 1] {
-        w.b.result(
-            format!("{}.impact_speed", parties[i].unit.id),
-            format!("Speed of {} at impact", parties[i].unit.id),
-            before[i],
-        );
+        let id = &parties[i].unit.id;
+        let label = format!("Speed of {id} at impact");
+        w.b.result((Sought::ImpactSpeed, Stage::Impact), Some(id), label, before[i], None);
     }
     for i in [0, 1] {
         delta_v(w, parties[i], after_xy[i], before_xy[i]);
@@ -382,17 +379,18 @@ fn losses(
 ) -> SlotId {
     let flat: Vec<SlotId> = before_xy.iter().flatten().copied().collect();
     let closing = w.b.call(momentum::ClosingSpeed::NODE, &flat, "V_{c}", "Closing speed", Some(place));
-    w.b.result("closing_speed", "Closing speed", closing);
+    w.b.result((Sought::ClosingSpeed, Stage::Impact), None, "Closing speed", closing, None);
     let ins = [a.mass, before[0], a.after, b.mass, before[1], b.after];
     let title = "Energy lost in the impact";
     let energy = w.b.call(momentum::EnergyLost::NODE, &ins, "E_{lost}", title, Some(place));
     let remark = "holds the spin energy left after the impact too (often a tenth, up to half)";
-    w.b.result_with("energy_lost".into(), title.into(), energy, remark);
+    w.b.result((Sought::EnergyLost, Stage::Impact), None, title, energy, Some(remark));
     let all: Vec<SlotId> = before_xy.iter().chain(after_xy.iter()).flatten().copied().collect();
     let title = "Restitution implied, centres of gravity along the line of the impulse";
     let restitution = w.b.call(momentum::ImpliedRestitution::NODE, &all, "e", title, Some(place));
     let remark = "of the centres of gravity along the line of the impulse, not of the contact";
-    w.b.result_with("restitution".into(), "Restitution implied".into(), restitution, remark);
+    let what = (Sought::Restitution, Stage::Impact);
+    w.b.result(what, None, "Restitution implied", restitution, Some(remark));
     restitution
 }
 
@@ -401,7 +399,7 @@ fn delta_v(w: &mut Backward<'_>, party: &Party<'_>, after: [SlotId; 2], before: 
     let [x, y] = [("x", "east", 0), ("y", "north", 1)].map(|(axis, along, i)| {
         let title = format!("Delta-V of {id}, {along} component");
         w.b.call(
-            momentum::VelocityChange::NODE,
+            contact::VelocityChange::NODE,
             &[after[i], before[i]],
             format!("ΔV_{{{id}{axis}}}"),
             title,
@@ -409,17 +407,22 @@ fn delta_v(w: &mut Backward<'_>, party: &Party<'_>, after: [SlotId; 2], before: 
         )
     });
     let size = w.b.call(
-        momentum::VectorSize::NODE,
+        contact::VectorSize::NODE,
         &[x, y],
         format!("ΔV_{{{id}}}"),
         format!("Delta-V of {id}"),
         None,
     );
-    w.b.result(format!("{id}.delta_v"), format!("Delta-V of {id}"), size);
+    w.b.result((Sought::DeltaV, Stage::Impact), Some(id), format!("Delta-V of {id}"), size, None);
     if let Some(heading) = party.heading {
         let title = format!("Principal direction of force on {id}");
-        let pdof =
-            w.b.call(momentum::ForceDirection::NODE, &[x, y, heading], format!("p_{{{id}}}"), title, None);
-        w.b.result(format!("{id}.pdof"), format!("Principal direction of force on {id}"), pdof);
+        let pdof = w.b.call(
+            momentum::ForceDirection::NODE,
+            &[x, y, heading],
+            format!("p_{{{id}}}"),
+            title.clone(),
+            None,
+        );
+        w.b.result((Sought::ForceDirection, Stage::Impact), Some(id), title, pdof, None);
     }
 }

@@ -105,9 +105,61 @@ impl std::fmt::Debug for Call {
     }
 }
 
+/// What a result is.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Sought {
+    /// Speed at the start of the visible marks.
+    SpeedAtStartOfMarks,
+    /// Speed at impact.
+    ImpactSpeed,
+    /// Speed after impact.
+    PostImpactSpeed,
+    /// Size of delta-V.
+    DeltaV,
+    /// Principal direction of force.
+    ForceDirection,
+    /// Closing speed.
+    ClosingSpeed,
+    /// Energy lost.
+    EnergyLost,
+    /// Restitution.
+    Restitution,
+}
+
+impl Sought {
+    /// The word in a result's stable name.
+    pub fn word(self) -> &'static str {
+        match self {
+            Sought::SpeedAtStartOfMarks => "speed_at_start_of_marks",
+            Sought::ImpactSpeed => "impact_speed",
+            Sought::PostImpactSpeed => "post_impact_speed",
+            Sought::DeltaV => "delta_v",
+            Sought::ForceDirection => "pdof",
+            Sought::ClosingSpeed => "closing_speed",
+            Sought::EnergyLost => "energy_lost",
+            Sought::Restitution => "restitution",
+        }
+    }
+}
+
+/// What a result hangs on, and falls with.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Stage {
+    /// Found from a travel alone.
+    Travel,
+    /// Found through the impact.
+    Impact,
+}
+
 /// A result with its stable name.
 #[derive(Debug, Clone)]
 pub struct Named {
+    /// What it is.
+    pub sought: Sought,
+    /// What it hangs on.
+    pub stage: Stage,
+    /// The unit it belongs to, if it belongs to one.
+    pub unit: Option<String>,
     /// Stable name, such as `A.impact_speed`.
     pub id: String,
     /// In words.

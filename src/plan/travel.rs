@@ -1,6 +1,6 @@
 //! Travel in stretches: lengths, drags, speeds at the joins.
 
-use super::backward::Backward;
+use super::backward::{Backward, Shared};
 use super::{Role, SlotId};
 use crate::case::{Begin, Drag, Phase, StandsFor, Stretch, StretchLength, TestId, Unit};
 use crate::physics::{braking, path};
@@ -39,9 +39,13 @@ pub(super) fn chain(
                 (false, _) => format!("{}'s marks, stretch {}", unit.id, index + 1),
             },
         };
-        let length = length(w, phase, stretch, &names);
+        let grade = stretch
+            .grade
+            .as_ref()
+            .map(|entry| w.b.entry(format!("G{}_{{{}}}", names.prime, names.index), entry, Role::Measured));
+        let length = length(w, phase, stretch, grade, &names);
         lengths.insert(0, length);
-        let drag = drag(w, stretch, after, &names);
+        let drag = drag(w, stretch, grade, after, &names);
         let symbol = match (index, after) {
             (0, true) => format!("v′_{{{}}}", unit.id),
             (0, false) => format!("v_{{{},s}}", unit.id),
@@ -64,11 +68,24 @@ pub(super) fn chain(
     speed
 }
 
-fn length(w: &mut Backward<'_>, phase: &Phase, stretch: &Stretch, names: &Names) -> SlotId {
+fn length(
+    w: &mut Backward<'_>,
+    phase: &Phase,
+    stretch: &Stretch,
+    grade: Option<SlotId>,
+    names: &Names,
+) -> SlotId {
     let symbol = format!("d{}_{{{}}}", names.prime, names.index);
-    match &stretch.length {
-        StretchLength::Entered(entry) => w.b.entry(symbol, entry, Role::Measured),
-        StretchLength::AlongPath(from, to) => along_path(w, phase, *from, *to, &symbol, names),
+    match (&stretch.length, grade) {
+        (StretchLength::Entered(entry), _) => w.b.entry(symbol, entry, Role::Measured),
+        (StretchLength::AlongPath(from, to), None) => along_path(w, phase, *from, *to, &symbol, names),
+        // Points are surveyed in plan; the drag acts along the slope.
+        (StretchLength::AlongPath(from, to), Some(grade)) => {
+            let in_plan = format!("d{}_{{p,{}}}", names.prime, names.index);
+            let plan = along_path(w, phase, *from, *to, &in_plan, names);
+            let title = format!("Length along the slope: {}", names.words);
+            w.b.call(path::SlopeLength::NODE, &[plan, grade], symbol, title, Some(stretch.place))
+        }
     }
 }
 
@@ -132,14 +149,16 @@ fn along_path(
     total.unwrap_or(w.gravity)
 }
 
-fn drag(w: &mut Backward<'_>, stretch: &Stretch, after: bool, names: &Names) -> SlotId {
+fn drag(
+    w: &mut Backward<'_>,
+    stretch: &Stretch,
+    grade: Option<SlotId>,
+    after: bool,
+    names: &Names,
+) -> SlotId {
     let symbol = format!("f{}_{{{}}}", names.prime, names.index);
     let title = format!("Drag factor: {}", names.words);
     let place = Some(stretch.place);
-    let grade = stretch
-        .grade
-        .as_ref()
-        .map(|entry| w.b.entry(format!("G{}_{{{}}}", names.prime, names.index), entry, Role::Measured));
     match &stretch.drag {
         Drag::Friction { test, share } => {
             let k = friction_error(w, *test, after);
@@ -185,9 +204,11 @@ fn friction_error(w: &mut Backward<'_>, test: TestId, after: bool) -> Option<Slo
     let t = &w.case.tests[test.0];
     let whose = format!(", test {}", t.id);
     if after {
-        Some(w.method_error(format!("k′_{{{}}}", t.id), &braking::TRAVEL_ERROR, &whose))
+        let symbol = format!("k′_{{{}}}", t.id);
+        Some(w.shared(Shared::Travel(test), |w| w.method_error(symbol, &braking::TRAVEL_ERROR, &whose)))
     } else if t.stands_for == StandsFor::SurfaceMean {
-        Some(w.method_error(format!("k_{{{}}}", t.id), &braking::SKID_ERROR, &whose))
+        let symbol = format!("k_{{{}}}", t.id);
+        Some(w.shared(Shared::Skid(test), |w| w.method_error(symbol, &braking::SKID_ERROR, &whose)))
     } else {
         None
     }
@@ -195,40 +216,24 @@ fn friction_error(w: &mut Backward<'_>, test: TestId, after: bool) -> Option<Slo
 
 /// The friction of a test, added once.
 pub(super) fn friction(w: &mut Backward<'_>, test: TestId) -> SlotId {
-    let t = &w.case.tests[test.0];
-    let symbol = format!("μ_{{{}}}", t.id);
-    if let Some(slot) = w.shared(&symbol) {
-        return slot;
-    }
-    let slot = match &t.grade {
-        None => w.b.entry(symbol.clone(), &t.drag, Role::Measured),
-        Some(grade) => {
-            let drag = w.b.entry(format!("f_{{{}}}", t.id), &t.drag, Role::Measured);
-            let grade = w.b.entry(format!("G_{{{}}}", t.id), grade, Role::Measured);
-            let title = format!("Friction of the surface from test {}", t.id);
-            w.b.call(braking::TestFriction::NODE, &[drag, grade], symbol.clone(), title, Some(t.drag.place))
-        }
-    };
-    w.share(symbol, slot);
-    slot
+    w.shared(Shared::Friction(test), |w| {
+        let t = &w.case.tests[test.0];
+        let symbol = format!("μ_{{{}}}", t.id);
+        let Some(grade) = &t.grade else { return w.b.entry(symbol, &t.drag, Role::Measured) };
+        let drag = w.b.entry(format!("f_{{{}}}", t.id), &t.drag, Role::Measured);
+        let grade = w.b.entry(format!("G_{{{}}}", t.id), grade, Role::Measured);
+        let title = format!("Friction of the surface from test {}", t.id);
+        w.b.call(braking::TestFriction::NODE, &[drag, grade], symbol, title, Some(t.drag.place))
+    })
 }
 
 /// A factor of exactly one, where a formula has room for a method error that
 /// does not apply.
 fn one(w: &mut Backward<'_>) -> SlotId {
-    let symbol = "k_{0}";
-    if let Some(slot) = w.shared(symbol) {
-        return slot;
-    }
-    let slot = w.b.assumed(
-        symbol,
-        Kind::Ratio,
-        1.0,
-        "no method error",
-        "none on top of 'this vehicle here' or of a stated drag factor",
-    );
-    w.share(symbol.into(), slot);
-    slot
+    w.shared(Shared::One, |w| {
+        let why = "none on top of 'this vehicle here' or of a stated drag factor";
+        w.b.assumed("k_{0}", Kind::Ratio, 1.0, "no method error", why)
+    })
 }
 
 /// A friction to take for the road's impulse on a unit: that of its first

@@ -1,11 +1,13 @@
 //! The JSON object: a contract for other programs.
 //!
-//! One object: `format`, `version`, `caution`, `case`, `case_sha256`, `seed`,
+//! One object: `format`, `version`, `caution`, `case`, `case_sha256`,
+//! `points_sha256`, `seed`,
 //! `trials`, `results` (a map from a stable id), `refused`, `notices`. Values
 //! are in SI units, angles in radians. Keys are never renamed within a format.
 
 use super::caution;
 use crate::analysis::Outcome;
+use crate::plan::Sought;
 use crate::uncertainty::Basis;
 use crate::units::clock;
 use serde::Serialize;
@@ -18,6 +20,7 @@ struct Export<'a> {
     caution: &'a str,
     case: &'a str,
     case_sha256: String,
+    points_sha256: Option<String>,
     seed: Option<u64>,
     trials: u64,
     impossible_trials: u64,
@@ -47,6 +50,8 @@ struct ExportedNotice<'a> {
     message: &'a str,
     line: Option<usize>,
     #[serde(skip_serializing_if = "Option::is_none")]
+    hint: Option<&'a str>,
+    #[serde(skip_serializing_if = "Option::is_none")]
     answer: Option<&'a str>,
 }
 
@@ -61,6 +66,7 @@ pub fn render(outcome: &Outcome) -> String {
         caution: caution::SHORT,
         case: analysis.map_or("", |a| a.case.identity.number.as_str()),
         case_sha256: outcome.sha256(0),
+        points_sha256: outcome.files.get(1).map(|_| outcome.sha256(1)),
         seed: analysis.map(|a| a.seed),
         trials: analysis.map_or(0, |a| a.sampling.trials),
         impossible_trials: analysis.map_or(0, |a| a.sampling.impossible),
@@ -85,7 +91,7 @@ fn exported<'a>(outcome: &'a Outcome, r: &'a crate::analysis::Answered) -> Expor
         high: r.band.high,
         coverage: 0.95,
         method: r.band.basis,
-        remark: if r.named.id.ends_with(".pdof") {
+        remark: if r.named.sought == Sought::ForceDirection {
             Some(clock(r.band.value))
         } else {
             r.named.remark.map(Into::into)
@@ -100,6 +106,7 @@ fn notice<'a>(outcome: &Outcome, n: &'a crate::diag::Notice) -> ExportedNotice<'
         severity: n.severity,
         message: &n.message,
         line,
+        hint: n.hint.as_deref(),
         answer: n.answer.as_deref(),
     }
 }

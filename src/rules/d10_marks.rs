@@ -5,13 +5,14 @@
 
 use super::{Facts, Finding};
 use crate::diag::Notice;
+use crate::plan::Sought;
 
 pub(super) fn rule(facts: &Facts<'_>) -> Vec<Finding> {
     facts
         .plan
         .results
         .iter()
-        .filter(|r| r.id.ends_with(".speed_at_start_of_marks"))
+        .filter(|r| r.sought == Sought::SpeedAtStartOfMarks)
         .map(|r| {
             let message =
                 format!("{}: at the start of the visible mark, a minimum for the onset of braking", r.label);

@@ -15,7 +15,22 @@ const TURN: f64 = 5.0;
 const STEP: std::ops::Range<f64> = 1.0..4.0;
 
 pub(super) fn rule(facts: &Facts<'_>) -> Vec<Finding> {
-    facts.plan.watch.departures.iter().flat_map(|d| departure(facts, d)).collect()
+    let mut found: Vec<Finding> =
+        facts.plan.watch.departures.iter().flat_map(|d| departure(facts, d)).collect();
+    for unit in &facts.case.units {
+        for phase in &unit.phases {
+            let bends_back = phase.path.windows(3).any(|p| {
+                let (first, second) = (vector(facts, (p[0], p[1])).0, vector(facts, (p[1], p[2])).0);
+                turn(second, first).abs() > std::f64::consts::FRAC_PI_2
+            });
+            if bends_back {
+                let message = format!("the path of {} after impact turns back on itself", unit.id);
+                let hint = "are its points in the order travelled?";
+                found.push(Notice::warn("M-3", message).at(phase.place).hint(hint).into());
+            }
+        }
+    }
+    found
 }
 
 fn departure(facts: &Facts<'_>, d: &Departure) -> Vec<Finding> {
@@ -43,9 +58,9 @@ fn departure(facts: &Facts<'_>, d: &Departure) -> Vec<Finding> {
         found.push(Notice::warn("M-3", message).at(d.place).hint(hint).into());
     } else if !d.stated && !STEP.contains(&step) {
         let message = format!(
-            "the direction of {} after impact comes from two points {} m apart",
+            "the direction of {} after impact comes from two points {} apart",
             d.unit,
-            fixed(step, 2)
+            facts.show(Kind::Length, step)
         );
         found.push(
             Notice::note("M-3", message).at(d.place).hint("a point 1 to 3 m after separation is best: nearer it is uncertain, farther it may have curved").into(),

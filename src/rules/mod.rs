@@ -10,6 +10,7 @@ mod b4_shared;
 mod b6_impossible;
 mod d10_marks;
 mod d2_crest;
+mod d6_braking;
 mod m10_restitution;
 mod m12_closure;
 mod m13_chord;
@@ -18,13 +19,15 @@ mod m1_condition;
 mod m2_heavy_light;
 mod m3_departure;
 mod p5_sense;
+mod p6_unused;
 mod refused;
 mod s1_stability;
 
 use crate::case::Case;
-use crate::diag::Notice;
+use crate::diag::{Notice, Severity};
 use crate::plan::{Evaluation, Plan, SlotId};
 use crate::uncertainty::{Band, Sampling, Trials};
+use crate::units::{Kind, significant};
 
 /// What a rule may look at.
 pub struct Facts<'a> {
@@ -75,6 +78,7 @@ const RULES: &[Rule] = &[
     b4_shared::rule,
     b6_impossible::rule,
     d2_crest::rule,
+    d6_braking::rule,
     d10_marks::rule,
     m1_condition::rule,
     m2_heavy_light::rule,
@@ -84,16 +88,32 @@ const RULES: &[Rule] = &[
     m13_chord::rule,
     m14_wide::rule,
     p5_sense::rule,
+    p6_unused::rule,
     s1_stability::rule,
     refused::rule,
 ];
 
 /// Applies every rule.
 pub fn apply(facts: &Facts<'_>) -> Vec<Finding> {
-    RULES.iter().flat_map(|rule| rule(facts)).collect()
+    let mut found: Vec<Finding> = RULES.iter().flat_map(|rule| rule(facts)).collect();
+    if found.iter().any(|f| f.withheld != Withheld::Nothing) {
+        // Remarks on results that are taken away would only distract.
+        found.retain(|f| f.notice.severity == Severity::Stop || !ON_RESULTS.contains(&f.notice.code));
+    }
+    found
 }
 
+/// Codes that speak of an impact's results.
+const ON_RESULTS: [&str; 6] = ["D-10", "M-2", "M-10", "M-14", "S-1", "S-2"];
+
 impl Facts<'_> {
+    /// An SI value in the reader's units, to three figures.
+    fn show(&self, kind: Kind, value: f64) -> String {
+        let (unit, scale) = self.case.identity.system.unit(kind);
+        let gap = if matches!(unit, "" | "°") { "" } else { " " };
+        format!("{}{gap}{unit}", significant(value / scale, 3))
+    }
+
     /// Standard uncertainty of any slot, by linear propagation.
     fn u(&self, slot: SlotId) -> f64 {
         let parts = self.plan.inputs.iter().zip(self.evaluation.row(slot)).map(|(i, s)| i.dist.u() * s);

@@ -136,6 +136,7 @@ pub struct Expression {
 
 // How tightly an operation binds: a part that binds less tightly than its
 // surroundings stands in brackets.
+const NEGATIVE: u8 = 0;
 const SUM: u8 = 1;
 const PRODUCT: u8 = 2;
 const ATOM: u8 = 4;
@@ -193,8 +194,8 @@ impl Writer<'_> {
         };
         match node {
             Node::Leaf(index) => self.leaf(index),
-            Node::Add(a, b) => (format!("{} + {}", self.within(a, SUM), self.within(b, SUM)), SUM),
-            Node::Sub(a, b) => (format!("{} − {}", self.within(a, SUM), self.within(b, PRODUCT)), SUM),
+            Node::Add(a, b) => (format!("{} + {}", self.within(a, NEGATIVE), self.within(b, SUM)), SUM),
+            Node::Sub(a, b) => (format!("{} − {}", self.within(a, NEGATIVE), self.within(b, PRODUCT)), SUM),
             Node::Mul(a, b) if a == b => (format!("{}²", self.power(a)), ATOM),
             Node::Mul(a, b) => self.product(a, b),
             Node::Div(a, b) => (format!("{} / {}", self.within(a, PRODUCT), self.within(b, ATOM)), PRODUCT),
@@ -209,7 +210,7 @@ impl Writer<'_> {
     /// A leaf; a negative number is no atom, so that it gets brackets.
     fn leaf(&self, index: usize) -> (String, u8) {
         let text = self.leaves.get(index).cloned().unwrap_or_else(|| "?".into());
-        let binding = if text.starts_with('−') { SUM } else { ATOM };
+        let binding = if text.starts_with('−') { NEGATIVE } else { ATOM };
         (text, binding)
     }
 

@@ -22,15 +22,22 @@ impl Generator {
     /// The stream number `stream` of a seed. Streams are independent of the
     /// order in which they are used, hence of the number of threads.
     pub fn new(seed: u64, stream: u64) -> Self {
-        // Odd multiplier (the golden ratio): neighbouring streams differ in many bits.
-        let mixed = seed ^ stream.wrapping_add(1).wrapping_mul(0x9E37_79B9_7F4A_7C15);
-        Generator(Xoshiro256PlusPlus::seed_from_u64(mixed))
+        // Scrambled twice, so that neighbouring seeds and streams start from
+        // unrelated states; the generator's own seeding only counts on.
+        Generator(Xoshiro256PlusPlus::seed_from_u64(scramble(scramble(seed) ^ stream)))
     }
 
     /// A uniform number in (0, 1): never 0, never 1.
     pub fn uniform(&mut self) -> f64 {
         ((self.0.next_u64() >> 11) as f64 + 0.5) * (1.0 / 9_007_199_254_740_992.0)
     }
+}
+
+/// Stafford's mix 13: every bit of the input moves every bit of the output.
+fn scramble(x: u64) -> u64 {
+    let x = (x ^ (x >> 30)).wrapping_mul(0xBF58_476D_1CE4_E5B9);
+    let x = (x ^ (x >> 27)).wrapping_mul(0x94D0_49BB_1331_11EB);
+    x ^ (x >> 31)
 }
 
 /// The tables of the method.

@@ -1,7 +1,7 @@
 //! Which band is printed: the linear one where Monte Carlo confirms it, else
 //! the Monte Carlo one.
 
-use super::{Linear, Sampled, Sampling};
+use super::{Linear, Sampled, Sampling, Wanted};
 use crate::units::decimals_for;
 use serde::Serialize;
 
@@ -41,13 +41,12 @@ pub struct Band {
 }
 
 /// Joins both propagations; results that either refused are left out.
-/// `scales` are the reader's units (SI per unit).
-pub fn bands(linear: Vec<Option<Linear>>, sampling: &Sampling, scales: &[f64]) -> Vec<Option<Band>> {
+pub fn bands(linear: Vec<Option<Linear>>, sampling: &Sampling, wanted: &[Wanted]) -> Vec<Option<Band>> {
     linear
         .into_iter()
         .zip(&sampling.results)
-        .zip(scales)
-        .map(|((linear, sampled), scale)| Some(band(linear?, (*sampled)?, *scale)))
+        .zip(wanted)
+        .map(|((linear, sampled), w)| Some(band(linear?, (*sampled)?, w.scale)))
         .collect()
 }
 
@@ -65,7 +64,8 @@ fn band(linear: Linear, sampled: Sampled, scale: f64) -> Band {
         () if sure => Basis::Exact,
         // A band must not reach beyond the bounding case.
         () if beyond => Basis::MonteCarlo,
-        () if difference <= allowed => Basis::Linear,
+        // One block does not know its own error and confirms nothing.
+        () if allowed.is_finite() && difference <= allowed => Basis::Linear,
         () => Basis::MonteCarlo,
     };
     let (value, u, low, high) = match basis {

@@ -13,4 +13,4 @@ mod tally;
 
 pub use band::{Band, Basis, bands};
 pub use linear::{Linear, Share, linear};
-pub use monte_carlo::{BLOCK, Sampled, Sampling, Trials, sample};
+pub use monte_carlo::{BLOCK, Sampled, Sampling, Trials, Wanted, sample};

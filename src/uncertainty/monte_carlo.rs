@@ -8,7 +8,7 @@
 
 use super::tally::{Tally, tally};
 use crate::method::WIDTH;
-use crate::plan::{Block, Plan, SlotId};
+use crate::plan::{Block, Plan, SlotId, Stage};
 use crate::stats::{Generator, Ziggurat};
 use crate::units::{Kind, decimals_for};
 use rayon::prelude::*;
@@ -64,6 +64,21 @@ pub struct Sampling {
     pub results: Vec<Option<Sampled>>,
 }
 
+/// A slot whose distribution is wanted.
+#[derive(Debug, Clone, Copy)]
+pub struct Wanted {
+    /// The slot.
+    pub slot: SlotId,
+    /// What it hangs on: results of an impact are possible together or not.
+    pub stage: Stage,
+    /// Its value at the best estimates; angles are counted from there, so that
+    /// none is cut at ±180°.
+    pub centre: f64,
+    /// The reader's unit (SI per unit), to which the stability of printed
+    /// digits refers.
+    pub scale: f64,
+}
+
 /// One block's estimates of all results.
 struct BlockTally {
     impossible: u64,
@@ -71,25 +86,12 @@ struct BlockTally {
 }
 
 /// Draws and evaluates until the wanted slots are known to `trials`' demand.
-/// `scales` are the reader's units of the slots (SI per unit), to which the
-/// stability of printed digits refers. `centres` are the values at the best
-/// estimates; angles are counted from there, so that none is cut at ±180°.
-pub fn sample(
-    plan: &Plan,
-    wanted: &[SlotId],
-    centres: &[f64],
-    scales: &[f64],
-    seed: u64,
-    trials: Trials,
-) -> Sampling {
+pub fn sample(plan: &Plan, wanted: &[Wanted], seed: u64, trials: Trials) -> Sampling {
     let ziggurat = Ziggurat::default();
     let run = |first: usize, count: usize| -> Vec<BlockTally> {
         (first..first + count)
             .into_par_iter()
-            .map_init(
-                || Workspace::new(plan, wanted),
-                |w, block| w.run(plan, wanted, centres, seed, block, &ziggurat),
-            )
+            .map_init(|| Workspace::new(plan, wanted), |w, block| w.run(plan, wanted, seed, block, &ziggurat))
             .collect()
     };
     let mut blocks = Vec::new();
@@ -103,7 +105,7 @@ pub fn sample(
             Trials::UntilStable => STEP,
         };
         blocks.extend(run(blocks.len(), count));
-        let sampling = summed(&blocks, scales);
+        let sampling = summed(&blocks, wanted);
         let enough = trials != Trials::UntilStable || blocks.len() >= MOST;
         if enough || sampling.stable {
             return sampling;
@@ -118,15 +120,15 @@ struct Workspace {
 }
 
 impl Workspace {
-    fn new(plan: &Plan, wanted: &[SlotId]) -> Self {
-        Workspace { block: Block::new(plan, wanted), columns: vec![Vec::with_capacity(BLOCK); wanted.len()] }
+    fn new(plan: &Plan, wanted: &[Wanted]) -> Self {
+        let slots: Vec<SlotId> = wanted.iter().map(|w| w.slot).collect();
+        Workspace { block: Block::new(plan, &slots), columns: vec![Vec::with_capacity(BLOCK); wanted.len()] }
     }
 
     fn run(
         &mut self,
         plan: &Plan,
-        wanted: &[SlotId],
-        centres: &[f64],
+        wanted: &[Wanted],
         seed: u64,
         block: usize,
         ziggurat: &Ziggurat,
@@ -137,19 +139,34 @@ impl Workspace {
         for _ in 0..BLOCK / WIDTH {
             self.block.draw(plan, ziggurat, &mut rng);
             self.block.compute(plan);
-            let possible = self.block.possible();
-            impossible += possible.iter().filter(|p| !**p).count() as u64;
-            for (column, slot) in self.columns.iter_mut().zip(wanted) {
-                let trials = self.block.trials(*slot).iter().zip(possible);
-                column.extend(trials.filter(|(_, p)| **p).map(|(v, _)| *v));
-            }
+            impossible += self.keep(wanted);
         }
-        for ((column, slot), centre) in self.columns.iter_mut().zip(wanted).zip(centres) {
-            if plan.slot(*slot).kind == Kind::Angle {
-                column.iter_mut().for_each(|v| *v = near(*v, *centre));
+        for (column, w) in self.columns.iter_mut().zip(wanted) {
+            if plan.slot(w.slot).kind == Kind::Angle {
+                column.iter_mut().for_each(|v| *v = near(*v, w.centre));
             }
         }
         BlockTally { impossible, results: self.columns.iter_mut().map(|c| tally(c)).collect() }
+    }
+
+    /// Keeps the possible trials of one batch and counts the others. A crash
+    /// that is impossible in one result of its impact is possible in none of
+    /// them; what was found before the impact was looked at stands by itself.
+    fn keep(&mut self, wanted: &[Wanted]) -> u64 {
+        let mut whole = [true; WIDTH];
+        let mut joint = [true; WIDTH];
+        for w in wanted {
+            for (t, v) in self.block.trials(w.slot).iter().enumerate() {
+                whole[t] &= v.is_finite();
+                joint[t] &= w.stage == Stage::Travel || v.is_finite();
+            }
+        }
+        for (column, w) in self.columns.iter_mut().zip(wanted) {
+            let trials = self.block.trials(w.slot).iter().zip(&joint);
+            let kept = |v: f64, joint: bool| if w.stage == Stage::Impact { joint } else { v.is_finite() };
+            column.extend(trials.filter(|(v, j)| kept(**v, **j)).map(|(v, _)| *v));
+        }
+        whole.iter().filter(|possible| !**possible).count() as u64
     }
 }
 
@@ -160,15 +177,15 @@ fn near(angle: f64, centre: f64) -> f64 {
 }
 
 /// Joins the blocks in the order of their numbers.
-fn summed(blocks: &[BlockTally], scales: &[f64]) -> Sampling {
+fn summed(blocks: &[BlockTally], wanted: &[Wanted]) -> Sampling {
     let impossible = blocks.iter().map(|b| b.impossible).sum();
     let mut stable = true;
-    let results = (0..scales.len())
+    let results = (0..wanted.len())
         .map(|i| {
             let tallies: Option<Vec<Tally>> =
                 blocks.iter().map(|b| b.results.get(i).copied().flatten()).collect();
             let sampled = join(&tallies?);
-            stable &= is_stable(&sampled, scales[i]);
+            stable &= is_stable(&sampled, wanted[i].scale);
             Some(sampled)
         })
         .collect();

@@ -12,7 +12,7 @@ from mpmath import mp, mpf, mpc, atan, sin, cos, sqrt, matrix, lu_solve, exp, ar
 mp.dps = 50
 FILES = {
     "braking": "braking", "mass": "mass", "path": "path",
-    "momentum": "momentum", "inline_impact": "in-line",
+    "contact": "contact", "momentum": "momentum", "inline_impact": "in-line",
 }
 rows = {name: [] for name in FILES}
 
@@ -61,11 +61,12 @@ row("mass", "loaded-mass", [num("1483.7"), num("91.3")], num("1483.7") + num("91
 e1, n1, e2, n2 = map(num, ("12.345", "-7.891", "-31.07", "22.46"))
 z = mpc(e2 - e1, n2 - n1)
 row("path", "leg", [e1, n1, e2, n2], fabs(z), "modulus of a complex number")
+row("path", "slope-length", [num("23.71"), num("-0.087")], num("23.71") / cos(atan(num("-0.087"))), "length over the cosine of the slope")
 row("path", "course", [e1, n1, e2, n2], arg(z), "argument of a complex number")
 row("path", "longer-path", [num("13.37"), num("0.083")], num("13.37") + num("0.083"), "sum, 50 digits")
 
 # -- momentum ----------------------------------------------------------------
-row("momentum", "road-impulse", [num("-0.83"), mu, g, num("0.117")], -num("0.83") * mu * g * num("0.117") / 2, "50 digits")
+row("contact", "road-impulse", [num("-0.83"), mu, g, num("0.117")], -num("0.83") * mu * g * num("0.117") / 2, "50 digits")
 v, c = num("13.71"), num("2.113")
 z = v * exp(mpc(0, 1) * c)
 row("momentum", "component-x", [v, c], re(z), "real part of v exp(i c)")
@@ -86,12 +87,15 @@ row("momentum", "approach-speed", [px, py, m2, a2, a1], s[1], "two linear equati
 own, other, vo, vown = num("0.413"), num("2.207"), num("7.13"), num("16.83")
 P = m1 * vown * unit(own) + m2 * vo * unit(other)
 row("momentum", "approach-speed-known-partner", [re(P), im(P), m1, own, m2, vo, other], vown, "momentum made from the speed, read backward")
+off = num("311.7")
+Q_ = P + off * mpc(0, 1) * unit(own)
+row("momentum", "momentum-across-known-partner", [re(Q_), im(Q_), own, m2, vo, other], off, "momentum made with a known part across, read backward")
 P = m1 * vown * unit(own)
 row("momentum", "approach-speed-standing-partner", [re(P), im(P), m1, own], vown, "momentum made from the speed, read backward")
 row("momentum", "momentum-across", [px, py, own], im(mpc(px, py) / unit(own)), "imaginary part after turning the course to east")
-row("momentum", "velocity-change", [num("-3.17"), num("11.09")], num("-3.17") - num("11.09"), "difference, 50 digits")
+row("contact", "velocity-change", [num("-3.17"), num("11.09")], num("-3.17") - num("11.09"), "difference, 50 digits")
 dx, dy, psi = num("-7.13"), num("2.91"), num("0.377")
-row("momentum", "vector-size", [dx, dy], fabs(mpc(dx, dy)), "modulus of a complex number")
+row("contact", "vector-size", [dx, dy], fabs(mpc(dx, dy)), "modulus of a complex number")
 row("momentum", "force-direction", [dx, dy, psi], -arg(-mpc(dx, dy) / unit(psi)), "argument of -dV in the vehicle's axes, clockwise")
 b = [num(x) for x in ("14.2", "1.3", "-2.7", "9.9")]
 row("momentum", "closing-speed", b, fabs(mpc(b[0], b[1]) - mpc(b[2], b[3])), "modulus of a complex number")
@@ -113,7 +117,7 @@ J = (1 + E) * (U1 - U2) / (1 / M1 + 1 / M2)
 A1, A2 = U1 - J / M1, U2 + J / M2
 LOSS = (M1 * U1**2 + M2 * U2**2 - M1 * A1**2 - M2 * A2**2) / 2
 row("inline_impact", "reversed", [U2], -U2, "exact fraction")
-row("inline_impact", "road-taken-out", [Q(731, 100), Q(-19, 100)], Q(75, 10), "exact fraction")
+row("contact", "road-taken-out", [Q(731, 100), Q(-19, 100)], Q(75, 10), "exact fraction")
 row("inline_impact", "after-first", [M1, U1, M2, U2, E], A1, "impulse (1 + e) m_r V in fractions")
 row("inline_impact", "after-second", [M1, U1, M2, U2, E], A2, "impulse (1 + e) m_r V in fractions")
 row("inline_impact", "closing-from-separation", [A1, A2, E], U1 - U2, "forward impact read backward")
@@ -121,6 +125,8 @@ row("inline_impact", "closing-from-energy", [LOSS, M1, M2, E], U1 - U2, "forward
 row("inline_impact", "closing-from-delta-vs", [1, J / M1, 1, J / M2, E], U1 - U2, "forward impact read backward")
 row("inline_impact", "delta-v-mismatch", [M1, Q(103, 100), Q(9, 1), M2, Q(97, 100), Q(7, 1)],
     M1 * Q(927, 100) - M2 * Q(679, 100), "exact fraction")
+row("inline_impact", "separation-mismatch", [A1, A2 + Q(3, 10), E, U1 - U2], Q(3, 10), "forward impact with a known slip, read backward")
+row("contact", "recorded-delta-v", [Q(103, 100), Q(91, 10)], Q(9373, 1000), "exact fraction")
 row("inline_impact", "before-first", [M1, A1, M2, A2, U1 - U2], U1, "forward impact read backward")
 row("inline_impact", "before-second", [M1, A1, M2, A2, U1 - U2], U2, "forward impact read backward")
 row("inline_impact", "before-known-partner", [M1, A1, M2, A2, U2], U1, "forward impact read backward")

@@ -11,6 +11,17 @@ pub(super) struct Context {
     pub(super) notices: Notices,
     /// What a ± without its kind means, if the case says so.
     pub(super) spread: Option<Spread>,
+    /// Points, tests or impacts were given but could not be read: names that
+    /// stand for nothing are then no fault of their own.
+    pub(super) broken: Broken,
+}
+
+/// Which parts of the case could not be read.
+#[derive(Debug, Default)]
+pub(super) struct Broken {
+    pub(super) points: bool,
+    pub(super) tests: bool,
+    pub(super) impacts: bool,
 }
 
 impl Context {
@@ -76,7 +87,12 @@ impl Context {
         if !section.has(key) {
             section.missing(key, what, &mut self.notices);
         }
-        self.text_of(section, key).filter(|t| !t.is_empty())
+        let text = self.text_of(section, key)?;
+        if text.trim().is_empty() {
+            section.missing(key, what, &mut self.notices);
+            return None;
+        }
+        Some(text)
     }
 
     /// The yes or no under a key; absent is `None`.

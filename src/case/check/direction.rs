@@ -92,7 +92,7 @@ pub(super) fn named_point(
 ) -> Option<PointId> {
     let number = text.trim().strip_prefix("point ").map(str::trim);
     let found = number.and_then(|n| points.iter().position(|p| p.number == n)).map(PointId);
-    if found.is_none() {
+    if found.is_none() && !cx.broken.points {
         let names: Vec<String> = points.iter().map(|p| format!("point {}", p.number)).collect();
         let all: Vec<&str> = names.iter().map(String::as_str).collect();
         let shown = if all.len() > 12 { &all[..12] } else { &all[..] };

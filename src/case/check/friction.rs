@@ -27,7 +27,7 @@ pub(super) fn tests(root: &Section<'_>, cx: &mut Context) -> Vec<FrictionTest> {
 
 fn test(id: &str, section: &Section<'_>, cx: &mut Context) -> Option<FrictionTest> {
     section.only(KEYS, &mut cx.notices);
-    let said = Said::of(section);
+    let said = Said::of(section, cx);
     let surface = cx.required_text(section, "surface", "the surface and its state, such as \"lane, dry\"");
     let braking = cx.choice(section, "braking", &[("locked", Braking::Locked), ("abs", Braking::Abs)]);
     if !section.has("braking") {

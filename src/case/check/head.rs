@@ -69,13 +69,14 @@ pub(super) fn error_changes(root: &Section<'_>, known: &[MethodError], cx: &mut 
         };
         let Some(section) = cx.table(&item, format!("method_error.{id}")) else { continue };
         section.only(&["value", "reason"], &mut cx.notices);
-        let lo = if error.id == "road_impulse" { f64::NEG_INFINITY } else { 0.0 };
-        let field = Field {
-            key: "value",
-            kind: error.kind,
-            bounds: (lo, f64::INFINITY),
-            plausible: (f64::NEG_INFINITY, f64::INFINITY),
+        // A factor on the drag or the delta-V lies round one: 3 % is no factor.
+        let bounds = match error.dist.estimate() {
+            1.0 => (0.5, 1.5),
+            0.0 => (f64::NEG_INFINITY, f64::INFINITY),
+            _ => (0.0, f64::INFINITY),
         };
+        let field =
+            Field { key: "value", kind: error.kind, bounds, plausible: (f64::NEG_INFINITY, f64::INFINITY) };
         let reason = cx.required_text(&section, "reason", "why the case changes this method error");
         let entry = quantity::required(&section, field, error.title, &Said::default(), cx);
         if let (Some(entry), Some(reason)) = (entry, reason) {
@@ -89,12 +90,13 @@ pub(super) fn error_changes(root: &Section<'_>, known: &[MethodError], cx: &mut 
 pub(super) fn answers(root: &Section<'_>, cx: &mut Context) -> Vec<Answer> {
     let mut answers = Vec::new();
     for section in cx.sections(root, "answer") {
-        section.only(&["code", "reason", "by"], &mut cx.notices);
+        section.only(&["code", "about", "reason", "by"], &mut cx.notices);
         let code = cx.required_text(&section, "code", "the warning's code, such as M-2");
         let reason = cx.required_text(&section, "reason", "why the result stands all the same");
         let by = cx.required_text(&section, "by", "who says so");
         if let (Some(code), Some(reason), Some(by)) = (code, reason, by) {
-            answers.push(Answer { code, reason, by, place: section.place });
+            let about = cx.text_of(&section, "about");
+            answers.push(Answer { code, about, reason, by, place: section.place });
         }
     }
     answers

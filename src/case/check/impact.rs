@@ -22,7 +22,7 @@ fn impact(
     cx: &mut Context,
 ) -> Option<Impact> {
     section.only(KEYS, &mut cx.notices);
-    let said = Said::of(section);
+    let said = Said::of(section, cx);
     let units = pair(section, names, cx)?;
     let words = [("momentum", ImpactMethod::Momentum), ("in-line", ImpactMethod::InLine)];
     if !section.has("method") {

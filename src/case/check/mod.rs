@@ -17,10 +17,11 @@ use super::raw::{Section, parse};
 use super::survey;
 use crate::diag::{FileId, Notice, Notices, Place, SourceFile};
 use crate::method::MethodError;
+use crate::units::System;
 use context::Context;
 
 /// Largest case or points file that is read, bytes.
-const LARGEST: usize = 4 << 20;
+pub const LARGEST: usize = 4 << 20;
 
 /// What reading a case gave.
 #[derive(Debug)]
@@ -82,10 +83,24 @@ fn whole(
     root.only(KEYS, &mut cx.notices);
     head::format(root, cx);
     let (identity, gravity) = head::identity(root, cx);
+    let before = cx.notices.len();
     let points = points(root, cx, load, files);
+    cx.broken.points = cx.notices.len() > before;
+    let survey = root.get("survey").and_then(|i| i.section("survey"));
+    if let (Some(survey), Some(identity)) = (survey, &identity)
+        && identity.system == System::Us
+        && !survey.has("units")
+    {
+        let notice = Notice::note("CF-9", "the coordinates of the points file are read as metres");
+        cx.notices.push(notice.at(survey.place).hint("say units = \"m\" or \"ft\" in [survey]"));
+    }
+    let before = cx.notices.len();
     let tests = friction::tests(root, cx);
+    cx.broken.tests = cx.notices.len() > before;
     let names = unit::names(root, cx);
+    let before = cx.notices.len();
     let impacts = impact::impacts(root, &names, cx);
+    cx.broken.impacts = cx.notices.len() > before;
     let scope = phase::Scope { points: &points, tests: &tests, impacts: &impacts };
     let units = unit::units(root, &scope, cx);
     let error_changes = head::error_changes(root, errors, cx);
@@ -102,14 +117,16 @@ fn points(
 ) -> Vec<super::Point> {
     let mut points = Vec::new();
     if let Some(survey) = cx.section(root, "survey") {
-        survey.only(&["points", "coordinate"], &mut cx.notices);
+        survey.only(&["points", "units", "coordinate"], &mut cx.notices);
+        let metre = cx.choice(&survey, "units", &[("m", ("m", 1.0)), ("ft", ("ft", 0.3048))]);
         let spread = quantity::spread(&survey, "coordinate", cx);
         if let (Some(item), Some(spread)) = (survey.get("points"), spread) {
             let name = cx.text(&item, "the name of a CSV file").unwrap_or_default();
             match load(&name) {
                 Ok(text) if text.len() <= LARGEST => {
                     let file = FileId(files.len());
-                    points = survey::points(&text, file, spread, &mut cx.notices);
+                    points =
+                        survey::points(&text, file, spread, metre.unwrap_or(("m", 1.0)), &mut cx.notices);
                     files.push(SourceFile { name, text });
                 }
                 Ok(_) => {

@@ -4,7 +4,7 @@ use super::context::Context;
 use super::direction::{direction, named_point, point};
 use super::quantity::{self, SPEED, Said};
 use super::stretch::stretch;
-use crate::case::model::{Begin, End, FrictionTest, Impact, Phase, Point, PointId};
+use crate::case::model::{Begin, End, FrictionTest, Impact, Phase, Point, PointId, Stretch, StretchLength};
 use crate::case::raw::Section;
 use crate::diag::Notice;
 
@@ -41,11 +41,11 @@ pub(super) fn phase(
         (Begin::Impact(_), _) => AFTER,
     };
     section.only(keys, &mut cx.notices);
-    let said = Said::of(section);
+    let said = Said::of(section, cx);
     let name = |what: &str| format!("{what} of {unit} {}", span.words);
     let path = path(section, scope, cx);
     let standing = cx.flag(section, "standing").unwrap_or(false);
-    let travel: Vec<_> = cx
+    let travel: Vec<Stretch> = cx
         .sections(section, "travel")
         .iter()
         .enumerate()
@@ -65,6 +65,7 @@ pub(super) fn phase(
         let notice = Notice::stop("X-1", message).at(section.place);
         cx.notices.push(notice.expected("speed, or travel from which the speed follows"));
     }
+    joined(&travel, &path, section, unit, cx);
     Phase {
         begin: span.begin,
         end: span.end,
@@ -96,11 +97,39 @@ fn path(section: &Section<'_>, scope: &Scope<'_>, cx: &mut Context) -> Vec<Point
     }
     path.extend(point(section, "rest", scope.points, cx));
     let has_separation = section.has("separation");
-    if !path.is_empty() && (!has_separation || path.len() < 2) {
+    if !path.is_empty() && !section.has("rest") && !cx.broken.points {
+        let notice = Notice::stop("CF-3", "a path ends at rest, and rest is missing");
+        cx.notices.push(notice.at(section.place).expected("rest = \"point …\""));
+    }
+    if !path.is_empty() && (!has_separation || path.len() < 2) && !cx.broken.points {
         let notice = Notice::stop("CF-3", "a path starts at separation and has at least one more point");
         cx.notices.push(
             notice.at(section.place).expected("separation = \"point …\", path = […], rest = \"point …\""),
         );
     }
     path
+}
+
+/// Stretches along the path join each other and cover it: a gap leaves speed
+/// out, an overlap counts it twice.
+fn joined(travel: &[Stretch], path: &[PointId], section: &Section<'_>, unit: &str, cx: &mut Context) {
+    let mut at = 0;
+    for stretch in travel {
+        match stretch.length {
+            StretchLength::Entered(_) => return,
+            StretchLength::AlongPath(from, to) if from == at => at = to,
+            StretchLength::AlongPath(..) => {
+                let message = format!("{unit}: this stretch does not begin where the one before it ends");
+                let notice = Notice::stop("CF-11", message).at(stretch.place);
+                cx.notices.push(notice.expected("from = the point at which the stretch before ends"));
+                return;
+            }
+        }
+    }
+    if !travel.is_empty() && !path.is_empty() && at + 1 != path.len() {
+        let message = format!("{unit}: the stretches end before rest");
+        cx.notices.push(
+            Notice::stop("CF-11", message).at(section.place).expected("a last stretch up to the rest point"),
+        );
+    }
 }

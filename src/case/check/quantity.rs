@@ -49,9 +49,8 @@ pub(super) struct Said {
 impl Said {
     /// Source and note of the surrounding table: they serve every entry in it
     /// that has none of its own.
-    pub(super) fn of(section: &Section<'_>) -> Self {
-        let said = |key: &str| section.get(key).and_then(|i| i.text()).map(str::to_string);
-        Said { source: said("source"), note: said("note") }
+    pub(super) fn of(section: &Section<'_>, cx: &mut Context) -> Self {
+        Said { source: cx.text_of(section, "source"), note: cx.text_of(section, "note") }
     }
 }
 
@@ -90,7 +89,7 @@ pub(super) fn opened<'a>(item: Item<'a>, said: &Said, cx: &mut Context) -> Optio
         table.missing("value", "the quantity itself", &mut cx.notices);
         return None;
     };
-    let own = Said::of(&table);
+    let own = Said::of(&table, cx);
     Some((value, Said { source: own.source.or(said.source.clone()), note: own.note.or(said.note.clone()) }))
 }
 
@@ -175,6 +174,13 @@ pub(super) fn repeats(items: &[Item<'_>], kind: Kind, cx: &mut Context) -> Optio
 /// Type A evaluation of at least four readings (rule B-3).
 pub(super) fn enough(readings: &[f64], place: Place, cx: &mut Context) -> Option<TypeA> {
     let result = type_a(readings).filter(|t| t.n >= 4);
+    if result.is_some_and(|t| t.s == 0.0) {
+        let message =
+            "all readings are the same: they tell how finely was read, not how the quantity scatters";
+        let notice = Notice::stop("B-3", message).at(place).expected("readings that differ");
+        cx.notices.push(notice.hint("give the mean with an uncertainty of your own: \"0.72 ± 0.06 (95 %)\""));
+        return None;
+    }
     if result.is_none() {
         let message = format!(
             "{} reading(s): too few to take an uncertainty from their scatter (Student's t is 12.7 for two, 4.3 for three)",
@@ -198,14 +204,16 @@ fn possible(entry: &Entry, cx: &mut Context) -> bool {
         return true;
     }
     let (unit, _) = System::Metric.unit(entry.kind);
-    let show = |v: f64| format!("{} {unit}", significant(System::Metric.number(entry.kind, v), 4));
+    let show = |v: f64| {
+        format!("{} {unit}", significant(System::Metric.number(entry.kind, v), 4)).trim_end().to_string()
+    };
     let range = match (lo, hi) {
         (lo, hi) if hi.is_infinite() && lo == f64::MIN_POSITIVE => "more than zero".to_string(),
-        (lo, hi) if hi.is_infinite() => format!("{} or more", show(lo)),
+        (_, hi) if hi.is_infinite() => format!("{} or more", show(lo)),
         (lo, hi) => format!("from {} to {}", show(lo), show(hi)),
     };
     cx.notices.push(
-        Notice::stop("CF-8", format!("{}: {} is not possible", entry.name, show(value)))
+        Notice::stop("CF-8", format!("{}: {} is not possible", entry.name, entry.entered))
             .at(entry.place)
             .expected(range.trim().to_string()),
     );
@@ -255,7 +263,7 @@ pub(super) fn spread(section: &Section<'_>, key: &str, cx: &mut Context) -> Opti
 
 /// A point typed into the case file.
 pub(super) fn point(number: &str, section: &Section<'_>, cx: &mut Context) -> Option<Point> {
-    let said = Said::of(section);
+    let said = Said::of(section, cx);
     let code = cx.text_of(section, "code").map_or(String::new(), |c| format!(" ({c})"));
     let east = required(section, EAST, &format!("point {number}{code}, east"), &said, cx);
     let north = required(section, NORTH, &format!("point {number}{code}, north"), &said, cx);

@@ -5,7 +5,7 @@ use super::direction::point;
 use super::phase::Scope;
 use super::quantity::{self, DISTANCE, DRAG, SHARE, Said, notice_of, opened};
 use crate::case::model::{Drag, Entry, PointId, Stretch, StretchLength, TestId};
-use crate::case::notation::{Fault, quantity as read_quantity};
+use crate::case::notation::{Fault, quantity as read_quantity, steepness};
 use crate::case::raw::{Item, Section};
 use crate::diag::Notice;
 use crate::stats::Dist;
@@ -36,8 +36,14 @@ pub(super) fn stretch(
     cx: &mut Context,
 ) -> Option<Stretch> {
     section.only(KEYS, &mut cx.notices);
-    let said = Said::of(section);
+    let said = Said::of(section, cx);
     let grade = grade(section, &format!("grade, {what}"), &said, cx);
+    if !section.has("grade") && !section.has("includes_grade") {
+        let message = format!("{what}: no grade is entered, so it is taken as level");
+        cx.notices.push(
+            Notice::note("D-2", message).at(section.place).hint("say grade = \"level\" if it was measured"),
+        );
+    }
     let length = length(section, what, path, scope, &said, cx);
     let drag = drag(section, what, grade.is_some(), scope, &said, cx);
     let crest = cx.flag(section, "crest").unwrap_or(false);
@@ -63,8 +69,13 @@ fn length(
     };
     match (end_of("from", 0), end_of("to", last)) {
         (Ok(from), Ok(to)) if from < to => Some(StretchLength::AlongPath(from, to)),
+        _ if cx.broken.points => None,
         _ => {
-            let message = format!("{what}: no length");
+            let message = if section.has("from") || section.has("to") {
+                format!("{what}: from and to are not points of this unit's path, in its order")
+            } else {
+                format!("{what}: no length")
+            };
             cx.notices.push(
                 Notice::stop("CF-3", message)
                     .at(section.place)
@@ -108,7 +119,7 @@ fn friction(
     let item = section.get("friction")?;
     let name = cx.text(&item, "the name of a friction test")?;
     let test = scope.tests.iter().position(|t| t.id == name).map(TestId);
-    if test.is_none() {
+    if test.is_none() && !cx.broken.tests {
         let known: Vec<&str> = scope.tests.iter().map(|t| t.id.as_str()).collect();
         cx.unknown_name(&item, &name, &format!("'{name}' is not a friction test of this case"), &known);
     }
@@ -196,7 +207,10 @@ const GRADE_WANTED: &str =
 pub(super) fn grade(section: &Section<'_>, name: &str, said: &Said, cx: &mut Context) -> Option<Entry> {
     let item = section.get("grade")?;
     let (value, said) = opened(item, said, cx)?;
-    let text = value.text_or_number()?;
+    let Some(text) = value.text_or_number() else {
+        cx.wrong_sort(&value, GRADE_WANTED);
+        return None;
+    };
     if text == "level" {
         return None;
     }
@@ -211,7 +225,12 @@ pub(super) fn grade(section: &Section<'_>, name: &str, said: &Said, cx: &mut Con
     };
     let skip = text.len() - rest.len();
     match rise_over_run(rest, cx) {
-        Ok(dist) => steepness(make(dist.affine(0.0, sign), name, &text, said, &value), cx),
+        Ok(dist) if dist.estimate() < 0.0 => {
+            let message = "a grade is up or down; a minus sign beside that can mean either";
+            cx.notices.push(Notice::stop("D-2", message).at(value.place()).expected(GRADE_WANTED));
+            None
+        }
+        Ok(dist) => too_steep(make(dist.affine(0.0, sign), name, &text, said, &value), cx),
         Err(fault) => {
             cx.notices.push(notice_of(fault, &value, skip));
             None
@@ -242,7 +261,7 @@ fn rise_over_run(text: &str, cx: &Context) -> Result<Dist, Fault> {
         return Err(Fault { from: 0, to: text.len(), code: "U-3", message, expected, hint: None });
     }
     if percent {
-        return read_quantity(text, Kind::Ratio, cx.spread);
+        return steepness(text, cx.spread);
     }
     let angle = read_quantity(text, Kind::Angle, cx.spread)?;
     let tangent = libm::tan(angle.estimate());
@@ -251,7 +270,7 @@ fn rise_over_run(text: &str, cx: &Context) -> Result<Dist, Fault> {
 }
 
 /// Rule U-3: steep grades are flagged, impossible ones refused.
-fn steepness(entry: Entry, cx: &mut Context) -> Option<Entry> {
+fn too_steep(entry: Entry, cx: &mut Context) -> Option<Entry> {
     let size = entry.dist.estimate().abs();
     if size > 0.35 {
         let message = format!("{}: {:.0} % is steeper than any road", entry.name, size * 100.0);

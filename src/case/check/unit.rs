@@ -62,7 +62,7 @@ fn unit(
     cx: &mut Context,
 ) -> Unit {
     section.only(KEYS, &mut cx.notices);
-    let said = Said::of(section);
+    let said = Said::of(section, cx);
     let struck: Vec<usize> =
         (0..scope.impacts.len()).filter(|i| scope.impacts[*i].units.contains(&index)).collect();
     let fixed = cx.flag(section, "fixed").unwrap_or(false);
@@ -92,7 +92,7 @@ fn phases(
     let mut phases = Vec::new();
     let (Some(first), Some(last)) = (struck.first(), struck.last()) else {
         for key in ["pre_impact", "post_impact", "after_impact"] {
-            if let Some(item) = section.get(key) {
+            if let Some(item) = section.get(key).filter(|_| !cx.broken.impacts) {
                 let notice = Notice::stop("CF-3", format!("{id} has {key}, but no [[impact]] names it"))
                     .at(item.place());
                 cx.notices.push(notice.expected("an [[impact]] with this unit, or to_rest for a unit alone"));

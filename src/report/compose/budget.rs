@@ -2,6 +2,7 @@
 //! of it is worth.
 
 use crate::analysis::{Analysis, Answered};
+use crate::plan::Sought;
 use crate::report::document::{Block, Column, Table};
 use crate::uncertainty::Share;
 use crate::units::{Kind, decimals_for, fixed, significant};
@@ -38,7 +39,7 @@ fn per_degree(analysis: &Analysis) -> Vec<Block> {
     let rows: Vec<Vec<String>> = analysis
         .results
         .iter()
-        .filter(|r| r.named.id.ends_with(".impact_speed"))
+        .filter(|r| r.named.sought == Sought::ImpactSpeed)
         .map(|r| {
             let by = analysis.plan.adjoint(&analysis.evaluation, r.named.slot);
             let cells = directions.iter().map(|d| significant(by[d.0] * degree / scale, 2));
@@ -59,15 +60,8 @@ fn per_degree(analysis: &Analysis) -> Vec<Block> {
 fn table(analysis: &Analysis, answered: &Answered) -> Table {
     let kind = analysis.plan.slot(answered.named.slot).kind;
     let (unit, scale) = analysis.case.identity.system.unit(kind);
-    let mut rows = Vec::new();
-    for (rank, share) in answered.band.linear.shares.iter().enumerate() {
-        let input = analysis.plan.inputs[share.input].slot;
-        let is_direction =
-            analysis.plan.slot(input).kind == Kind::Angle && answered.named.id.ends_with("_speed");
-        if rank < SHOWN || is_direction {
-            rows.push(row(analysis, share, unit, scale));
-        }
-    }
+    let shares = answered.band.linear.shares.iter().take(SHOWN);
+    let rows = shares.map(|share| row(analysis, share, unit, scale)).collect();
     Table {
         columns: vec![
             Column::words("Symbol", 0.8),
@@ -112,11 +106,12 @@ fn summary(analysis: &Analysis, answered: &Answered) -> String {
     let l = &answered.band.linear;
     let s = &answered.band.sampled;
     let decimals = decimals_for(l.u / scale).unwrap_or(3);
+    let unit = if matches!(unit, "" | "°") { unit.to_string() } else { format!(" {unit}") };
     let show = |v: f64| fixed(v / scale, decimals);
     if !l.u.is_finite() {
         return format!(
             "Linear propagation says nothing here: a quantity under a root is zero at its best estimate. Monte Carlo: \
-             u = {}, 95 % from {} to {} {unit}.",
+             u = {}, 95 % from {} to {}{unit}.",
             significant(s.u / scale, 2),
             significant(s.low / scale, 3),
             significant(s.high / scale, 3)
@@ -124,8 +119,8 @@ fn summary(analysis: &Analysis, answered: &Answered) -> String {
     }
     let dof = if l.dof > 1e4 { "∞".to_string() } else { fixed(l.dof, 0) };
     format!(
-        "Linear: u = {} {unit}, effective degrees of freedom {dof}, k = {}, 95 % from {} to {}. Monte Carlo: u = {}, \
-         95 % from {} to {}, shortest {} to {}. Bounding case: {} to {} {unit}.",
+        "Linear: u = {}{unit}, effective degrees of freedom {dof}, k = {}, 95 % from {} to {}. Monte Carlo: u = {}, \
+         95 % from {} to {}, shortest {} to {}. Bounding case: {} to {}{unit}.",
         show(l.u),
         fixed(l.k, 2),
         show(l.low()),

@@ -2,7 +2,7 @@
 //! away add up to the same momentum.
 
 use crate::analysis::Analysis;
-use crate::plan::MomentumSlots;
+use crate::plan::{MomentumSlots, Sought};
 use crate::report::document::{Block, Figure, Mark, Stroke};
 use crate::units::{System, clock, fixed};
 
@@ -21,7 +21,7 @@ struct Arrow {
 }
 
 pub(super) fn section(analysis: &Analysis) -> Vec<Block> {
-    let stands = analysis.results.iter().any(|r| r.named.id == "closing_speed");
+    let stands = analysis.results.iter().any(|r| r.named.sought == Sought::ClosingSpeed);
     match &analysis.plan.watch.momentum {
         Some(impact) if stands => figure(analysis, impact).map(Block::Figure).into_iter().collect(),
         _ => Vec::new(),
@@ -155,7 +155,7 @@ fn in_words(analysis: &Analysis, arrows: &[Arrow]) -> Vec<String> {
             )
         })
         .collect();
-    for r in analysis.results.iter().filter(|r| r.named.id.ends_with(".pdof")) {
+    for r in analysis.results.iter().filter(|r| r.named.sought == Sought::ForceDirection) {
         words.push(format!("{}: {}", r.named.label, clock(r.band.value)));
     }
     words

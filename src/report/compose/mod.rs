@@ -67,6 +67,7 @@ fn signing(outcome: &Outcome, analysis: &Analysis) -> Vec<Block> {
         .collect();
     vec![
         Block::Heading { level: 1, text: "Record and sign-off".into() },
+        Block::SignOff(vec!["Prepared by".into(), "Reviewed by (recomputed independently)".into()]),
         Block::Paragraph(format!("Made with retrodict {}, case file format 1.", env!("CARGO_PKG_VERSION"))),
         Block::Paragraph(format!("Files: {}", files.join("; "))),
         Block::Paragraph(format!(
@@ -75,7 +76,6 @@ fn signing(outcome: &Outcome, analysis: &Analysis) -> Vec<Block> {
             analysis.sampling.trials,
             crate::uncertainty::BLOCK
         )),
-        Block::SignOff(vec!["Prepared by".into(), "Reviewed by (recomputed independently)".into()]),
     ]
 }
 

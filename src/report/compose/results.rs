@@ -2,6 +2,7 @@
 
 use crate::analysis::{Analysis, Answered, Outcome};
 use crate::diag::Severity;
+use crate::plan::Sought;
 use crate::report::document::{Block, Column, Table};
 use crate::uncertainty::{Band, Basis};
 use crate::units::{Kind, System, clock, compass, decimals_for, fixed, significant};
@@ -53,7 +54,11 @@ fn table(analysis: &Analysis) -> Table {
             vec![
                 label(a),
                 text.value,
-                if a.band.u > 0.0 { format!("{} to {}", text.low, text.high) } else { "as entered".into() },
+                if a.band.u > 0.0 {
+                    format!("{} to {}", text.low, text.high)
+                } else {
+                    if a.line.is_some() { "exact".into() } else { "as entered".into() }
+                },
                 text.u,
                 contributors(analysis, a),
                 a.line.map_or_else(|| "entry".into(), |n| format!("[{n}]")),
@@ -76,7 +81,7 @@ fn table(analysis: &Analysis) -> Table {
 /// A direction of force always goes with words: a mistaken sign of 30° is a
 /// mistake of 60°.
 fn label(a: &Answered) -> String {
-    if a.named.id.ends_with(".pdof") {
+    if a.named.sought == Sought::ForceDirection {
         format!("{}: {}", a.named.label, clock(a.band.value))
     } else {
         a.named.label.clone()
@@ -100,12 +105,13 @@ impl BandText {
             None => significant(v / scale, 5),
         };
         let u = if band.u > 0.0 { show(band.u) } else { "exact".into() };
-        BandText {
-            value: format!("{}{gap}{unit}", show(band.value)),
-            low: show(band.low),
-            high: show(band.high),
-            u,
+        let line = show(band.linear.value);
+        let mut value = format!("{}{gap}{unit}", show(band.value));
+        if line != show(band.value) {
+            // A mean of trials that is not what the worked line gives says so.
+            value.push_str(&format!(" (line: {line})"));
         }
+        BandText { value, low: show(band.low), high: show(band.high), u }
     }
 }
 
@@ -123,13 +129,16 @@ fn contributors(analysis: &Analysis, answered: &Answered) -> String {
     if parts.is_empty() { "none".into() } else { parts.join(", ") }
 }
 
+const MEAN: &str = "There the value is the mean of the trials; where it prints otherwise than the worked line, the \
+                    line's value stands beside it.";
+
 /// How the bands are to be read.
 fn reading(analysis: &Analysis) -> String {
     let of = |basis: Basis| analysis.results.iter().filter(|r| r.band.basis == basis).count();
     let how = match (of(Basis::Linear), of(Basis::MonteCarlo)) {
         (0, 0) => "Nothing that enters has an uncertainty, so there are no bands.".to_string(),
         (_, 0) => "Bands are by linear propagation, confirmed by Monte Carlo.".to_string(),
-        (0, _) => "Bands are by Monte Carlo; linear propagation differs from it.".to_string(),
+        (0, _) => format!("Bands are by Monte Carlo, since linear propagation differs. {MEAN}"),
         (_, _) => {
             let names: Vec<&str> = analysis
                 .results
@@ -138,9 +147,8 @@ fn reading(analysis: &Analysis) -> String {
                 .map(|r| r.named.label.as_str())
                 .collect();
             format!(
-                "Bands are by linear propagation, confirmed by Monte Carlo; except by Monte Carlo, from which linear \
-                 propagation differs, for: {}. There the value is the mean of the trials and may differ a little from \
-                 the worked line.",
+                "Bands are by linear propagation, confirmed by Monte Carlo; but by Monte Carlo, since linear \
+                 propagation differs, for: {}. {MEAN}",
                 names.join("; ")
             )
         }
@@ -182,7 +190,13 @@ fn refused(analysis: &Analysis) -> Vec<Block> {
     if analysis.refused.is_empty() {
         return Vec::new();
     }
-    let rows = analysis.refused.iter().map(|(n, why)| vec![n.label.clone(), why.clone()]).collect();
+    let mut rows: Vec<Vec<String>> = Vec::new();
+    for (named, why) in &analysis.refused {
+        match rows.iter_mut().find(|row| row[1] == *why) {
+            Some(row) => row[0].push_str(&format!("; {}", named.label)),
+            None => rows.push(vec![named.label.clone(), why.clone()]),
+        }
+    }
     vec![
         Block::Heading { level: 2, text: "Refused results".into() },
         Block::Table(Table {
