@@ -12,7 +12,7 @@ use std::array::from_fn;
 use std::marker::PhantomData;
 
 /// Trials that are computed together.
-pub const WIDTH: usize = 200;
+pub const WIDTH: usize = 400;
 
 /// One value for each of [`WIDTH`] trials.
 pub type Lanes = [f64; WIDTH];
@@ -110,8 +110,8 @@ pub trait Node: Send + Sync {
     /// The value and its derivative by each input.
     fn gradient(&self, x: &[f64]) -> Result<(f64, Vec<f64>), Refusal>;
     /// The values of many trials; a trial outside the limits, or one with an
-    /// input that is not a number, gives no finite number. Inputs are not
-    /// infinite: the plan's block lets no such trial through.
+    /// input that is not a number, is not a number. An infinite result is
+    /// made not a number at once, so that no formula meets an infinity.
     fn batch(&self, x: &[Column<'_>], y: &mut Lanes);
     /// The formula itself.
     fn expression(&self) -> Expression;
@@ -157,10 +157,8 @@ impl<F: Formula<N>, const N: usize> Node for Of<F, N> {
                     Lane::plain(c.value[t])
                 }
             };
-            *y = F::eval::<Lane>(from_fn(lane)).value;
-        }
-        for limit in F::CARD.limits {
-            refuse_lanes(limit, columns, y);
+            let result = F::eval::<Lane>(from_fn(lane)).value;
+            *y = refused(F::CARD.limits, |i| columns[i].value[t], result);
         }
     }
 
@@ -171,20 +169,19 @@ impl<F: Formula<N>, const N: usize> Node for Of<F, N> {
     }
 }
 
-/// Not a number wherever the limited quantity lies outside its range.
-fn refuse_lanes(limit: &Limit, x: &[Column<'_>], y: &mut Lanes) {
-    let within = |v: f64| v >= limit.lo && v <= limit.hi;
-    match limit.about {
-        About::Output => y.iter_mut().filter(|y| !within(**y)).for_each(|y| *y = f64::NAN),
-        About::Input(i) => {
-            let Some(column) = x.get(i) else { return };
-            for (y, v) in y.iter_mut().zip(column.value) {
-                if !within(*v) {
-                    *y = f64::NAN;
-                }
-            }
-        }
+/// The result, or not a number where it is infinite or a limit is not kept.
+#[inline(always)]
+fn refused(limits: &[Limit], input: impl Fn(usize) -> f64, y: f64) -> f64 {
+    // Zero for numbers, not a number for infinities.
+    let mut kept = y + 0.0 * y;
+    for limit in limits {
+        let limited = match limit.about {
+            About::Input(i) => input(i),
+            About::Output => y,
+        };
+        kept = if limited >= limit.lo && limited <= limit.hi { kept } else { f64::NAN };
     }
+    kept
 }
 
 /// The first limit that is not kept; a result that is no finite number is
@@ -304,5 +301,33 @@ impl Limit {
     /// A range for the result.
     pub const fn output(lo: f64, hi: f64, reason: &'static str) -> Self {
         Limit { about: About::Output, lo, hi, reason }
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::physics::formulas;
+
+    /// A block looks at its results only: so what is no number must come
+    /// through every formula, and no infinity may get lost on the way.
+    #[test]
+    fn no_number_and_infinity_give_no_number() {
+        let ones = [0.9; WIDTH];
+        for node in formulas() {
+            for (i, port) in node.card().inputs.iter().enumerate() {
+                for odd in [f64::NAN, f64::INFINITY] {
+                    let bad = [odd; WIDTH];
+                    let mut columns =
+                        vec![Column { value: &ones, sin: &ones, cos: &ones }; node.card().inputs.len()];
+                    // Sine and cosine of either are not a number.
+                    columns[i] = Column { value: &bad, sin: &[f64::NAN; WIDTH], cos: &[f64::NAN; WIDTH] };
+                    let mut y = [1.0; WIDTH];
+                    node.batch(&columns, &mut y);
+                    let through = if odd.is_nan() { y[0].is_nan() } else { !y[0].is_infinite() };
+                    assert!(through, "{} with {odd} for {}", node.card().id, port.symbol);
+                }
+            }
+        }
     }
 }

@@ -1,7 +1,8 @@
 //! Evaluates a plan for many trials at once.
 
-use super::{Plan, SlotId};
+use super::{Call, Plan, SlotId};
 use crate::method::{Column, Lanes, WIDTH};
+use crate::scalar::trig::sincos_all;
 use crate::stats::{Generator, Ziggurat};
 use crate::units::Kind;
 
@@ -54,26 +55,27 @@ impl Block {
         }
     }
 
-    /// Computes every line for the drawn inputs.
+    /// Computes every line for the drawn inputs. Whatever is not a number makes
+    /// all that follows from it not a number.
     pub fn compute(&mut self, plan: &Plan) {
-        for input in &plan.inputs {
-            self.prepare_angle(input.slot);
-        }
+        plan.inputs.iter().for_each(|input| self.prepare_angle(input.slot));
         for (index, call) in plan.calls.iter().enumerate() {
-            if !self.live[index] {
-                continue;
+            if self.live[index] {
+                self.run(call);
+                self.prepare_angle(call.out);
             }
-            let mut out = std::mem::replace(&mut self.values[call.out.0], [0.0; WIDTH]);
-            let columns: Vec<Column<'_>> = call.ins.iter().map(|slot| self.column(*slot)).collect();
-            call.node.batch(&columns, &mut out);
-            self.values[call.out.0] = out;
-            self.prepare_angle(call.out);
         }
     }
 
-    fn column(&self, slot: SlotId) -> Column<'_> {
-        let trig = self.trig[slot.0];
-        Column { value: &self.values[slot.0], sin: &self.sines[trig], cos: &self.cosines[trig] }
+    /// A line's result stands after all that it needs.
+    fn run(&mut self, call: &Call) {
+        let (earlier, later) = self.values.split_at_mut(call.out.0);
+        let column = |slot: &SlotId| {
+            let trig = self.trig[slot.0];
+            Column { value: &earlier[slot.0], sin: &self.sines[trig], cos: &self.cosines[trig] }
+        };
+        let columns: Vec<Column<'_>> = call.ins.iter().map(column).collect();
+        call.node.batch(&columns, &mut later[0]);
     }
 
     fn prepare_angle(&mut self, slot: SlotId) {
@@ -81,13 +83,10 @@ impl Block {
         if trig == 0 {
             return;
         }
-        let pairs = self.sines[trig].iter_mut().zip(&mut self.cosines[trig]);
-        for (value, (sin, cos)) in self.values[slot.0].iter().zip(pairs) {
-            (*sin, *cos) = libm::sincos(*value);
-        }
+        sincos_all(&self.values[slot.0], &mut self.sines[trig], &mut self.cosines[trig]);
     }
 
-    /// The trials of a slot; not finite where a line on the way to it refused.
+    /// The trials of a slot; not a number where a line on the way to it refused.
     pub fn trials(&self, slot: SlotId) -> &Lanes {
         &self.values[slot.0]
     }

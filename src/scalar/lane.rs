@@ -108,6 +108,6 @@ impl Real for Lane {
 
     #[inline(always)]
     fn atan2(self, x: Self) -> Self {
-        Lane::plain(Real::atan2(self.value, x.value))
+        Lane::plain(super::trig::atan2(self.value, x.value))
     }
 }

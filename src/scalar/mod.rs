@@ -14,6 +14,7 @@ mod dual;
 mod lane;
 mod real;
 mod traced;
+pub(crate) mod trig;
 
 pub use dual::Dual;
 pub use lane::Lane;

@@ -4,8 +4,8 @@ use std::ops::{Add, Div, Mul, Neg, Sub};
 
 /// A number that formulas can compute with.
 ///
-/// Transcendental functions come from the `libm` crate at every kind of
-/// number, because the system's own change their last bits with the processor.
+/// Transcendental functions come from the `libm` crate, or for lanes from
+/// `trig.rs`: the system's own change their last bits with the processor.
 pub trait Real:
     Copy + Add<Output = Self> + Sub<Output = Self> + Mul<Output = Self> + Div<Output = Self> + Neg<Output = Self>
 {

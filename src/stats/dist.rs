@@ -138,9 +138,8 @@ impl Dist {
         match *self {
             Dist::Exact(v) => column.fill(v),
             Dist::Normal { mean, sd } => {
-                for x in column {
-                    *x = mean + sd * z.normal(rng);
-                }
+                z.fill(column, rng);
+                column.iter_mut().for_each(|x| *x = mean + sd * *x);
             }
             Dist::Rectangular { lo, hi } => {
                 for x in column {
@@ -164,12 +163,29 @@ impl Dist {
 /// A t is a normal over the root of a mean of squared normals.
 fn student(z: &Ziggurat, rng: &mut Generator, dof: u32) -> f64 {
     let top = z.normal(rng);
-    let mut squares = 0.0;
-    for _ in 0..dof {
-        let n = z.normal(rng);
-        squares += n * n;
+    top / (squares(z, rng, dof) / f64::from(dof)).sqrt()
+}
+
+/// The sum of `dof` squared normals, as twice a gamma number of shape `dof`/2.
+///
+/// Source: Marsaglia & Tsang, A Simple Method for Generating Gamma Variables,
+/// ACM Trans. Math. Softw. 26(3), 2000, for shapes of at least one.
+fn squares(z: &Ziggurat, rng: &mut Generator, dof: u32) -> f64 {
+    if dof < 2 {
+        let x = z.normal(rng);
+        return x * x;
     }
-    top / (squares / f64::from(dof)).sqrt()
+    let d = 0.5 * f64::from(dof) - 1.0 / 3.0;
+    let c = 1.0 / (9.0 * d).sqrt();
+    loop {
+        let x = z.normal(rng);
+        let v = (1.0 + c * x) * (1.0 + c * x) * (1.0 + c * x);
+        let (u, square) = (rng.uniform(), x * x);
+        let surely = u < 1.0 - 0.0331 * square * square;
+        if v > 0.0 && (surely || libm::log(u) < 0.5 * square + d * (1.0 - v + libm::log(v))) {
+            return 2.0 * d * v;
+        }
+    }
 }
 
 fn triangular_cdf(x: f64, lo: f64, mode: f64, hi: f64) -> f64 {

@@ -153,20 +153,21 @@ impl Workspace {
     /// that is impossible in one result of its impact is possible in none of
     /// them; what was found before the impact was looked at stands by itself.
     fn keep(&mut self, wanted: &[Wanted]) -> u64 {
-        let mut whole = [true; WIDTH];
-        let mut joint = [true; WIDTH];
+        // Zero where every result of the stage is a number, else not a number.
+        let (mut travel, mut impact) = ([0.0; WIDTH], [0.0; WIDTH]);
         for w in wanted {
-            for (t, v) in self.block.trials(w.slot).iter().enumerate() {
-                whole[t] &= v.is_finite();
-                joint[t] &= w.stage == Stage::Travel || v.is_finite();
+            let sum = if w.stage == Stage::Impact { &mut impact } else { &mut travel };
+            sum.iter_mut().zip(self.block.trials(w.slot)).for_each(|(sum, v)| *sum += v * 0.0);
+        }
+        let joint: Vec<usize> = (0..WIDTH).filter(|t| impact[*t] == 0.0).collect();
+        for (column, w) in self.columns.iter_mut().zip(wanted) {
+            let trials = self.block.trials(w.slot);
+            match w.stage {
+                Stage::Impact => column.extend(joint.iter().map(|t| trials[*t])),
+                Stage::Travel => column.extend(trials.iter().filter(|v| v.is_finite())),
             }
         }
-        for (column, w) in self.columns.iter_mut().zip(wanted) {
-            let trials = self.block.trials(w.slot).iter().zip(&joint);
-            let kept = |v: f64, joint: bool| if w.stage == Stage::Impact { joint } else { v.is_finite() };
-            column.extend(trials.filter(|(v, j)| kept(**v, **j)).map(|(v, _)| *v));
-        }
-        whole.iter().filter(|possible| !**possible).count() as u64
+        travel.iter().zip(&impact).filter(|(t, i)| **t + **i != 0.0).count() as u64
     }
 }
 
