@@ -11,7 +11,7 @@ use crate::physics::METHODS;
 use crate::plan::{Evaluation, Named, Plan, Planned, SlotId, SlotRefusal, Stage, backward};
 use crate::rules::{Facts, Withheld, apply};
 use crate::sheet::{Line, Numbering, Row, lines, register};
-use crate::uncertainty::{Band, Sampling, Trials, Wanted, bands, linear, sample};
+use crate::uncertainty::{Band, Sampling, Trials, Wanted, bands, linear, sample, standard_uncertainty};
 use sha2::{Digest, Sha256};
 
 /// What an analysis may be told.
@@ -142,7 +142,8 @@ fn evaluate(case: Case, plan: Plan, options: Options) -> (Analysis, Vec<Notice>)
         shown.extend(plan.checks());
     }
     let numbering = Numbering::new(&plan, &shown);
-    let u: Vec<f64> = (0..plan.slots.len()).map(|s| slot_u(&plan, &evaluation, SlotId(s))).collect();
+    let u: Vec<f64> =
+        (0..plan.slots.len()).map(|s| standard_uncertainty(&plan, &evaluation, SlotId(s))).collect();
     let lines = lines(&plan, &evaluation, &u, &numbering, case.identity.system);
     let results = kept
         .into_iter()
@@ -162,10 +163,6 @@ fn evaluate(case: Case, plan: Plan, options: Options) -> (Analysis, Vec<Notice>)
 type Kept = (Named, Band);
 /// A result that does not, with the reason.
 type Refused = (Named, String);
-
-fn slot_u(plan: &Plan, evaluation: &Evaluation, slot: SlotId) -> f64 {
-    linear(plan, evaluation, slot).map_or(0.0, |l| if l.u.is_finite() { l.u } else { 0.0 })
-}
 
 /// Separates the results that stand from those that were refused or that a
 /// stop takes away.

@@ -1,7 +1,7 @@
 //! The checked case.
 
 use crate::diag::Place;
-use crate::stats::{Dist, TypeA};
+use crate::stats::Dist;
 use crate::units::{Kind, System};
 
 /// Everything a case file says, checked.
@@ -121,8 +121,6 @@ pub struct FrictionTest {
     pub stands_for: StandsFor,
     /// Grade of the test, + uphill, if not level.
     pub grade: Option<Entry>,
-    /// The repeats it was taken from.
-    pub repeats: Option<TypeA>,
 }
 
 /// A vehicle, or a fixed object.

@@ -4,7 +4,7 @@
 //! with a code and what it withholds. Rules about a single entry live with the
 //! case's checkers, since they need its text. Never changes a number.
 //! A new rule is one file with its code, its test, its sentence and its
-//! remedy, and one line in [`RULES`].
+//! remedy, and one line in `RULES`.
 
 mod b4_shared;
 mod b6_impossible;
@@ -26,7 +26,7 @@ mod s1_stability;
 use crate::case::Case;
 use crate::diag::{Notice, Severity};
 use crate::plan::{Evaluation, Plan, SlotId};
-use crate::uncertainty::{Band, Sampling, Trials};
+use crate::uncertainty::{Band, Sampling, Trials, standard_uncertainty};
 use crate::units::{Kind, significant};
 
 /// What a rule may look at.
@@ -116,7 +116,6 @@ impl Facts<'_> {
 
     /// Standard uncertainty of any slot, by linear propagation.
     fn u(&self, slot: SlotId) -> f64 {
-        let parts = self.plan.inputs.iter().zip(self.evaluation.row(slot)).map(|(i, s)| i.dist.u() * s);
-        parts.filter(|p| p.is_finite()).map(|p| p * p).sum::<f64>().sqrt()
+        standard_uncertainty(self.plan, self.evaluation, slot)
     }
 }

@@ -50,6 +50,13 @@ impl Linear {
     }
 }
 
+/// Standard uncertainty of any slot, for its printed digits and for rules:
+/// infinite slopes are left out, where [`linear`] gives no number.
+pub fn standard_uncertainty(plan: &Plan, evaluation: &Evaluation, slot: SlotId) -> f64 {
+    let parts = plan.inputs.iter().zip(evaluation.row(slot)).map(|(input, slope)| input.dist.u() * slope);
+    parts.filter(|p| p.is_finite()).map(|p| p * p).sum::<f64>().sqrt()
+}
+
 /// Propagates to one slot; `None` when it was refused.
 pub fn linear(plan: &Plan, evaluation: &Evaluation, slot: SlotId) -> Option<Linear> {
     let value = evaluation.value(slot)?;

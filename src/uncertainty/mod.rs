@@ -12,5 +12,5 @@ mod monte_carlo;
 mod tally;
 
 pub use band::{Band, Basis, bands};
-pub use linear::{Linear, Share, linear};
+pub use linear::{Linear, Share, linear, standard_uncertainty};
 pub use monte_carlo::{BLOCK, Sampled, Sampling, Trials, Wanted, sample};

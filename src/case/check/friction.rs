@@ -6,7 +6,8 @@ use super::stretch;
 use crate::case::model::{Braking, Entry, FrictionTest, StandsFor};
 use crate::case::raw::{Item, Section};
 use crate::diag::Notice;
-use crate::stats::{Dist, TypeA};
+use crate::stats::Dist;
+use crate::units::significant;
 
 /// Least standard uncertainty of 'this vehicle here' (common practice).
 const FLOOR_THIS_VEHICLE: f64 = 0.03;
@@ -46,7 +47,7 @@ fn test(id: &str, section: &Section<'_>, cx: &mut Context) -> Option<FrictionTes
     }
     let grade = stretch::grade(section, &format!("grade of friction test {id}"), &said, cx);
     let name = format!("drag factor of friction test {id} ({})", surface.as_deref().unwrap_or(""));
-    let (drag, repeats) = drag_factor(section, &name, stands_for?, &said, cx)?;
+    let drag = drag_factor(section, &name, stands_for?, &said, cx)?;
     Some(FrictionTest {
         id: id.into(),
         surface: surface?,
@@ -54,7 +55,6 @@ fn test(id: &str, section: &Section<'_>, cx: &mut Context) -> Option<FrictionTes
         drag,
         stands_for: stands_for?,
         grade,
-        repeats,
     })
 }
 
@@ -65,14 +65,24 @@ fn drag_factor(
     stands_for: StandsFor,
     said: &Said,
     cx: &mut Context,
-) -> Option<(Entry, Option<TypeA>)> {
+) -> Option<Entry> {
     let item = section.get(DRAG.key);
     let list =
         item.and_then(|i| opened(i, said, cx)).and_then(|(value, said)| Some((value, value.array()?, said)));
-    match list {
-        Some((value, items, said)) => from_repeats(&value, &items, name, stands_for, said, cx),
-        None => quantity::required(section, DRAG, name, said, cx).map(|entry| (entry, None)),
-    }
+    let Some((value, items, said)) = list else {
+        let words = match stands_for {
+            StandsFor::ThisVehicle => "stands for this vehicle here",
+            StandsFor::SurfaceMean => "stands for the surface's mean",
+        };
+        return quantity::required(section, DRAG, name, said, cx).map(|entry| remarked(entry, words));
+    };
+    from_repeats(&value, &items, name, stands_for, said, cx)
+}
+
+/// Adds a remark to an entry's own.
+fn remarked(mut entry: Entry, words: &str) -> Entry {
+    entry.note = Some(entry.note.map_or_else(|| words.to_string(), |note| format!("{note}; {words}")));
+    entry
 }
 
 fn from_repeats(
@@ -82,7 +92,7 @@ fn from_repeats(
     stands_for: StandsFor,
     said: Said,
     cx: &mut Context,
-) -> Option<(Entry, Option<TypeA>)> {
+) -> Option<Entry> {
     let (readings, entered) = repeats(items, DRAG.kind, cx)?;
     if let Some(bad) = readings.iter().position(|r| !(*r > 0.0 && *r < 2.0)) {
         let place = items.get(bad).map_or(value.place(), Item::place);
@@ -91,9 +101,12 @@ fn from_repeats(
         return None;
     }
     let t = enough(&readings, value.place(), cx)?;
-    let scale = match stands_for {
-        StandsFor::ThisVehicle => t.of_the_next().max(FLOOR_THIS_VEHICLE),
-        StandsFor::SurfaceMean => t.of_the_mean(),
+    let (scale, meaning) = match stands_for {
+        StandsFor::ThisVehicle => (
+            t.of_the_next().max(FLOOR_THIS_VEHICLE),
+            "stands for this vehicle here: s √(1 + 1/n), at least 0.03",
+        ),
+        StandsFor::SurfaceMean => (t.of_the_mean(), "stands for the surface's mean: s/√n"),
     };
     let entry = Entry {
         name: name.into(),
@@ -105,5 +118,5 @@ fn from_repeats(
         place: value.place(),
         bounds: DRAG.bounds,
     };
-    Some((entry, Some(t)))
+    Some(remarked(entry, &format!("mean of {} readings, s = {}; {meaning}", t.n, significant(t.s, 2))))
 }
