@@ -99,7 +99,8 @@ fn substituted(plan: &Plan, e: &Evaluation, index: usize, call: &Call, i: usize,
 /// Standard uncertainty, and the value in the reader's units.
 fn aside(kind: Kind, value: f64, u: f64, places: i32, system: System) -> String {
     let mut parts = Vec::new();
-    if u > 0.0 {
+    // Less is a rounding error, not an uncertainty.
+    if u > 1e-9 * value.abs() {
         parts.push(format!("u = {}", si(kind, u, places)));
     }
     let (unit, scale) = system.unit(kind);
