@@ -31,6 +31,7 @@ const HOMES: &[(&str, &str)] = &[
     ("allsorts::", "report/pdf/"),
     ("annotate_snippets::", "report/terminal/notices.rs"),
     ("clap::", "cli/"),
+    ("clap_complete::", "cli/"),
     ("tempfile::", "cli/"),
     ("std::fs", "cli/"),
     ("std::env", "cli/"),

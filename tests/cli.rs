@@ -177,7 +177,15 @@ fn nothing_piped_carries_colour() {
 
 #[test]
 fn every_page_of_help_has_an_example() {
-    for args in [&["--help"][..], &["check", "--help"], &["solve", "--help"], &["print", "--help"]] {
+    for args in [
+        &["--help"][..],
+        &["check", "--help"],
+        &["solve", "--help"],
+        &["print", "--help"],
+        &["new", "--help"],
+        &["methods", "--help"],
+        &["completions", "--help"],
+    ] {
         let output = retrodict(root()).args(args).output().unwrap();
         let help = text(&output.stdout);
         assert!(help.contains("Example") && help.contains("cases/quarry-road.toml"), "{args:?}: {help}");
@@ -193,6 +201,59 @@ fn the_terminal_and_the_pdf_carry_the_caution() {
         assert!(page.contains(paragraph), "missing: {paragraph}");
     }
     assert!(page.ends_with(retrodict::report::caution::SHORT));
+}
+
+#[test]
+fn every_starter_is_valid_as_written_and_never_overwrites() {
+    let folder = tempfile::tempdir().unwrap();
+    for kind in ["crossing", "in-line", "to-rest"] {
+        let file = format!("{kind}.toml");
+        let output = retrodict(folder.path()).args(["new", kind]).output().unwrap();
+        assert_eq!(output.status.code(), Some(0), "{}", text(&output.stderr));
+        assert!(text(&output.stdout).starts_with(&format!("wrote {file}\n")));
+        for command in ["check", "solve", "print"] {
+            let output = retrodict(folder.path()).args([command, &file]).output().unwrap();
+            assert_eq!(output.status.code(), Some(0), "{command} {file}: {}", text(&output.stderr));
+        }
+        std::fs::write(folder.path().join(&file), "mine").unwrap();
+        let output = retrodict(folder.path()).args(["new", kind]).output().unwrap();
+        assert_eq!(output.status.code(), Some(2));
+        assert_eq!(std::fs::read_to_string(folder.path().join(&file)).unwrap(), "mine");
+    }
+    let output = retrodict(folder.path()).args(["new", "crosing"]).output().unwrap();
+    assert!(text(&output.stderr).contains("did you mean crossing?"));
+    let output = retrodict(folder.path()).arg("new").output().unwrap();
+    assert_eq!(output.status.code(), Some(2), "nothing is asked when piped");
+    assert!(text(&output.stderr).contains("to-rest"));
+}
+
+#[test]
+fn methods_are_listed_and_shown_with_formula_symbols_limits_and_source() {
+    let list = text(&retrodict(root()).arg("methods").output().unwrap().stdout);
+    for method in retrodict::physics::METHODS {
+        assert!(list.contains(method.id), "{}", method.id);
+        let output = retrodict(root()).args(["methods", method.id]).output().unwrap();
+        let page = text(&output.stdout).split_whitespace().collect::<Vec<_>>().join(" ");
+        for node in retrodict::physics::formulas().into_iter().filter(|n| n.card().method == method.id) {
+            assert!(page.contains(node.card().id) && page.contains(node.card().source), "{}", node.card().id);
+        }
+        for error in method.errors {
+            assert!(page.contains(error.id), "{}", error.id);
+        }
+        assert!(page.contains("not a finding of fault"));
+    }
+    let page = text(&retrodict(root()).args(["methods", "braking"]).output().unwrap().stdout);
+    assert!(page.contains("v_0 = √(v_1² + 2 g f d)"), "{page}");
+    let output = retrodict(root()).args(["methods", "brakin"]).output().unwrap();
+    assert!(output.status.code() == Some(2) && text(&output.stderr).contains("did you mean braking?"));
+}
+
+#[test]
+fn completion_scripts_name_the_commands() {
+    for shell in ["bash", "zsh", "fish", "powershell"] {
+        let script = text(&retrodict(root()).args(["completions", shell]).output().unwrap().stdout);
+        assert!(script.contains("print") && script.contains("seed"), "{shell}");
+    }
 }
 
 /// Every command in the README's code blocks runs; `cargo run` and `cargo

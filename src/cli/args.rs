@@ -39,6 +39,47 @@ pub enum Command {
     #[command(after_help = "Examples:\n  retrodict print cases/quarry-road.toml\n  retrodict print \
                             cases/quarry-road.toml -o worksheet.pdf")]
     Print(PrintArgs),
+    /// Write a starter case to fill in.
+    #[command(
+        after_help = "Examples:\n  retrodict new crossing\n  retrodict new to-rest my-case.toml\n\nThen: \
+                            retrodict check crossing.toml; whole examples: cases/quarry-road.toml and its neighbours."
+    )]
+    New(NewArgs),
+    /// Show the methods: formulas, symbols, limits, sources, method errors.
+    #[command(
+        after_help = "Examples:\n  retrodict methods\n  retrodict methods braking\n\nWhat they are used for: \
+                            retrodict solve cases/quarry-road.toml"
+    )]
+    Methods(MethodsArgs),
+    /// Print a completion script for a shell.
+    #[command(
+        after_help = "Example:\n  retrodict completions bash > retrodict.bash\n\nThen: retrodict check \
+                            cases/quarry-road.toml"
+    )]
+    Completions(CompletionsArgs),
+}
+
+/// Arguments of `new`.
+#[derive(Debug, Args)]
+pub struct NewArgs {
+    /// Kind of case: crossing, in-line or to-rest; asked at a terminal.
+    pub kind: Option<String>,
+    /// The file to write; without it, the kind with .toml, here.
+    pub file: Option<PathBuf>,
+}
+
+/// Arguments of `methods`.
+#[derive(Debug, Args)]
+pub struct MethodsArgs {
+    /// The method to show; without it, all in a list.
+    pub name: Option<String>,
+}
+
+/// Arguments of `completions`.
+#[derive(Debug, Args)]
+pub struct CompletionsArgs {
+    /// The shell.
+    pub shell: clap_complete::Shell,
 }
 
 /// Arguments of `check`.

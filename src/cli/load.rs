@@ -75,3 +75,16 @@ pub(super) fn say(text: &str) {
 pub(super) fn put(text: &str) {
     let _ = std::io::stdout().lock().write_all(text.as_bytes());
 }
+
+/// A temporary file starts out private; what the program writes is as readable as
+/// any file.
+#[cfg(unix)]
+pub(super) fn readable(file: &tempfile::NamedTempFile) -> Result<(), String> {
+    use std::os::unix::fs::PermissionsExt;
+    file.as_file().set_permissions(std::fs::Permissions::from_mode(0o644)).map_err(|e| e.to_string())
+}
+
+#[cfg(not(unix))]
+pub(super) fn readable(_: &tempfile::NamedTempFile) -> Result<(), String> {
+    Ok(())
+}

@@ -6,7 +6,10 @@
 
 mod args;
 mod check;
+mod completions;
 mod load;
+mod methods;
+mod new;
 mod print;
 mod solve;
 
@@ -23,6 +26,9 @@ pub fn run() -> u8 {
             Command::Check(args) => check::run(&args),
             Command::Solve(args) => solve::run(&args),
             Command::Print(args) => print::run(&args),
+            Command::New(args) => new::run(&args),
+            Command::Methods(args) => methods::run(&args),
+            Command::Completions(args) => completions::run(&args),
         },
         Err(error) => {
             // Printing help to a closed pipe is no fault.

@@ -54,18 +54,6 @@ fn write(output: &Path, case: &Path, bytes: &[u8]) -> Result<(), String> {
         tempfile::NamedTempFile::new_in(folder).map_err(|e| format!("{}: {e}", folder.display()))?;
     file.write_all(bytes).map_err(|e| e.to_string())?;
     file.as_file().sync_all().map_err(|e| e.to_string())?;
-    readable(&file)?;
+    super::load::readable(&file)?;
     file.persist(output).map(|_| ()).map_err(|e| e.to_string())
-}
-
-/// A temporary file starts out private; a worksheet is as readable as any file.
-#[cfg(unix)]
-fn readable(file: &tempfile::NamedTempFile) -> Result<(), String> {
-    use std::os::unix::fs::PermissionsExt;
-    file.as_file().set_permissions(std::fs::Permissions::from_mode(0o644)).map_err(|e| e.to_string())
-}
-
-#[cfg(not(unix))]
-fn readable(_: &tempfile::NamedTempFile) -> Result<(), String> {
-    Ok(())
 }

@@ -12,4 +12,4 @@ pub mod json;
 pub mod pdf;
 pub mod terminal;
 
-pub use compose::compose;
+pub use compose::{compose, method_list, method_page};

@@ -4,10 +4,13 @@
 
 mod budget;
 mod diagram;
+mod method_cards;
 mod notices;
 mod register;
 mod results;
 mod worked;
+
+pub use method_cards::{method_list, method_page};
 
 use super::caution;
 use super::document::{Block, Document};
