@@ -4,8 +4,8 @@
 //! What the command line and library users call. It hands numbers from one
 //! step to the next, so that the steps need not know each other.
 
-use crate::case::{Case, Checked};
-use crate::diag::{Notice, Notices, Severity, SourceFile};
+use crate::case::{Case, Checked, Question};
+use crate::diag::{Notice, Notices, Severity, SourceFile, nearest};
 use crate::method::MethodError;
 use crate::physics::METHODS;
 use crate::plan::{Evaluation, Named, Plan, Planned, SlotId, SlotRefusal, Stage, backward};
@@ -40,6 +40,19 @@ pub struct Answered {
     pub line: Option<usize>,
 }
 
+/// A question about a limit, with what the trials say.
+#[derive(Debug, Clone)]
+pub struct Asked {
+    /// The question.
+    pub question: Question,
+    /// The result asked about; `None` when it does not stand.
+    pub about: Option<Named>,
+    /// Probability that it was above the limit, with its standard error.
+    pub probability: (f64, f64),
+    /// Exceeded with a probability of 95 %, SI.
+    pub least: f64,
+}
+
 /// Everything an analysis found.
 #[derive(Debug)]
 pub struct Analysis {
@@ -57,6 +70,8 @@ pub struct Analysis {
     pub register: Vec<Row>,
     /// The worked lines.
     pub lines: Vec<Line>,
+    /// Questions with their probabilities.
+    pub questions: Vec<Asked>,
     /// The sampling.
     pub sampling: Sampling,
     /// The seed used.
@@ -99,6 +114,7 @@ pub fn analyse(name: &str, text: &str, load: crate::case::Load<'_>, options: Opt
     let Some(case) = case else { return Outcome { analysis: None, notices, files } };
     let Planned { plan, notices: planned } = backward(&case);
     notices.extend(planned);
+    notices.extend(unknown_results(&case, &plan));
     let (analysis, found) = evaluate(case, plan, options);
     notices.extend(found);
     let notices = answered(notices, &analysis.case).sorted();
@@ -109,16 +125,9 @@ fn evaluate(case: Case, plan: Plan, options: Options) -> (Analysis, Vec<Notice>)
     let evaluation = plan.evaluate(&plan.estimates());
     let standing: Vec<usize> =
         (0..plan.results.len()).filter(|i| evaluation.value(plan.results[*i].slot).is_some()).collect();
-    let wanted: Vec<Wanted> = standing
-        .iter()
-        .map(|i| {
-            let Named { slot, stage, .. } = plan.results[*i];
-            let scale = case.identity.system.unit(plan.slot(slot).kind).1;
-            Wanted { slot, stage, centre: evaluation.values[slot.0], scale }
-        })
-        .collect();
+    let wanted = wanted(&case, &plan, &evaluation, &standing);
     let sampling = if wanted.is_empty() {
-        Sampling { trials: 0, impossible: 0, stable: true, results: Vec::new() }
+        Sampling { trials: 0, impossible: 0, stable: true, results: Vec::new(), above: Vec::new() }
     } else {
         sample(&plan, &wanted, options.seed, options.trials)
     };
@@ -141,6 +150,7 @@ fn evaluate(case: Case, plan: Plan, options: Options) -> (Analysis, Vec<Notice>)
     if !findings.iter().any(|f| f.withheld != Withheld::Nothing) {
         shown.extend(plan.checks());
     }
+    let questions = asked(&case, &kept, &standing, &plan, &sampling);
     let numbering = Numbering::new(&plan, &shown);
     let u: Vec<f64> =
         (0..plan.slots.len()).map(|s| standard_uncertainty(&plan, &evaluation, SlotId(s))).collect();
@@ -154,8 +164,18 @@ fn evaluate(case: Case, plan: Plan, options: Options) -> (Analysis, Vec<Notice>)
         .collect();
     let register = register(&plan, &shown);
     let notices = findings.into_iter().map(|f| f.notice).collect();
-    let analysis =
-        Analysis { case, plan, evaluation, results, refused, register, lines, sampling, seed: options.seed };
+    let analysis = Analysis {
+        case,
+        plan,
+        evaluation,
+        results,
+        refused,
+        register,
+        lines,
+        questions,
+        sampling,
+        seed: options.seed,
+    };
     (analysis, notices)
 }
 
@@ -163,6 +183,46 @@ fn evaluate(case: Case, plan: Plan, options: Options) -> (Analysis, Vec<Notice>)
 type Kept = (Named, Band);
 /// A result that does not, with the reason.
 type Refused = (Named, String);
+
+/// What is to be known of each result that has a value.
+fn wanted(case: &Case, plan: &Plan, evaluation: &Evaluation, standing: &[usize]) -> Vec<Wanted> {
+    let of = |i: &usize| {
+        let Named { slot, stage, ref id, .. } = plan.results[*i];
+        let scale = case.identity.system.unit(plan.slot(slot).kind).1;
+        let limits = case.questions.iter().filter(|q| q.of == *id).map(|q| q.above.dist.estimate());
+        Wanted { slot, stage, centre: evaluation.values[slot.0], scale, limits: limits.collect() }
+    };
+    standing.iter().map(of).collect()
+}
+
+/// Questions about results that the case does not give.
+fn unknown_results(case: &Case, plan: &Plan) -> Vec<Notice> {
+    let known: Vec<&str> = plan.results.iter().map(|r| r.id.as_str()).collect();
+    let unknown = case.questions.iter().filter(|q| !known.contains(&q.of.as_str()));
+    unknown
+        .map(|q| {
+            let message = format!("the question is about '{}', which is no result of this case", q.of);
+            let notice = Notice::stop("CF-7", message).at(q.above.place);
+            let mut notice = notice.expected(format!("one of: {}", known.join(", ")));
+            notice.hint = nearest(&q.of, known.iter().copied()).map(|n| format!("did you mean {n}?"));
+            notice
+        })
+        .collect()
+}
+
+/// Puts to each question what the trials say of it.
+fn asked(case: &Case, kept: &[Kept], standing: &[usize], plan: &Plan, sampling: &Sampling) -> Vec<Asked> {
+    let answer = |question: &Question, index: usize| {
+        // The limits of a result were handed over in the order of its questions.
+        let earlier = case.questions.iter().take(index).filter(|q| q.of == question.of).count();
+        let result = standing.iter().position(|i| plan.results[*i].id == question.of)?;
+        let probability = *sampling.above.get(result)?.get(earlier)?;
+        let least = sampling.results.get(result)?.as_ref()?.least;
+        let about = kept.iter().find(|(named, _)| named.id == question.of).map(|(named, _)| named.clone());
+        Some(Asked { question: question.clone(), about, probability, least })
+    };
+    case.questions.iter().enumerate().filter_map(|(index, question)| answer(question, index)).collect()
+}
 
 /// Separates the results that stand from those that were refused or that a
 /// stop takes away.

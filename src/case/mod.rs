@@ -16,6 +16,6 @@ mod survey;
 pub use check::{Checked, LARGEST, Load, read};
 pub use model::{
     Answer, Begin, Braking, Case, Direction, Drag, End, Entry, ErrorChange, FrictionTest, Identity, Impact,
-    ImpactMethod, Phase, Point, PointId, StandsFor, Stretch, StretchLength, TestId, Unit, UnitId,
+    ImpactMethod, Phase, Point, PointId, Question, StandsFor, Stretch, StretchLength, TestId, Unit, UnitId,
 };
 pub use notation::{Fault, Spread, quantity, spread_alone};

@@ -23,6 +23,8 @@ pub struct Case {
     pub error_changes: Vec<ErrorChange>,
     /// Answers to warnings.
     pub answers: Vec<Answer>,
+    /// Questions about a limit.
+    pub questions: Vec<Question>,
 }
 
 /// What stands at the head of the worksheet.
@@ -274,6 +276,17 @@ pub struct ErrorChange {
     pub entry: Entry,
     /// Why.
     pub reason: String,
+}
+
+/// A question: was a result above a limit?
+#[derive(Debug, Clone)]
+pub struct Question {
+    /// Stable name of the result.
+    pub of: String,
+    /// The limit, a value without uncertainty.
+    pub above: Entry,
+    /// The question in the asker's words.
+    pub asked: Option<String>,
 }
 
 /// An answer to a warning.

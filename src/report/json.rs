@@ -26,6 +26,7 @@ struct Export<'a> {
     impossible_trials: u64,
     results: BTreeMap<&'a str, Exported<'a>>,
     refused: BTreeMap<&'a str, &'a str>,
+    questions: Vec<ExportedQuestion<'a>>,
     notices: Vec<ExportedNotice<'a>>,
 }
 
@@ -41,6 +42,17 @@ struct Exported<'a> {
     method: Basis,
     #[serde(skip_serializing_if = "Option::is_none")]
     remark: Option<String>,
+}
+
+#[derive(Serialize)]
+struct ExportedQuestion<'a> {
+    of: &'a str,
+    above: f64,
+    /// `None` where the result was refused.
+    probability: Option<f64>,
+    standard_error: Option<f64>,
+    at_least: Option<f64>,
+    remark: &'static str,
 }
 
 #[derive(Serialize)]
@@ -74,6 +86,7 @@ pub fn render(outcome: &Outcome) -> String {
         refused: analysis
             .map(|a| a.refused.iter().map(|(n, why)| (n.id.as_str(), why.as_str())).collect())
             .unwrap_or_default(),
+        questions: analysis.map(|a| a.questions.iter().map(question).collect()).unwrap_or_default(),
         notices: outcome.notices.iter().map(|n| notice(outcome, n)).collect(),
     };
     // Only numbers that are not finite could fail, and bands hold none.
@@ -96,6 +109,18 @@ fn exported<'a>(outcome: &'a Outcome, r: &'a crate::analysis::Answered) -> Expor
         } else {
             r.named.remark.map(Into::into)
         },
+    }
+}
+
+fn question(asked: &crate::analysis::Asked) -> ExportedQuestion<'_> {
+    let known = asked.about.is_some();
+    ExportedQuestion {
+        of: &asked.question.of,
+        above: asked.question.above.dist.estimate(),
+        probability: known.then_some(asked.probability.0),
+        standard_error: known.then_some(asked.probability.1),
+        at_least: known.then_some(asked.least),
+        remark: "at_least: one-sided, 95 %; a probability is not a finding of fault",
     }
 }
 

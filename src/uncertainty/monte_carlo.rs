@@ -46,6 +46,8 @@ pub struct Sampled {
     pub high: f64,
     /// Ends of the shortest 95 % interval.
     pub shortest: (f64, f64),
+    /// Exceeded with a probability of 95 %: the one-sided lower bound.
+    pub least: f64,
     /// Standard errors of value, u, low and high.
     pub errors: [f64; 4],
 }
@@ -62,10 +64,13 @@ pub struct Sampling {
     /// The results, in the order asked for; `None` where too few trials were
     /// possible.
     pub results: Vec<Option<Sampled>>,
+    /// For each result the probability of each of its limits being exceeded,
+    /// with its standard error.
+    pub above: Vec<Vec<(f64, f64)>>,
 }
 
 /// A slot whose distribution is wanted.
-#[derive(Debug, Clone, Copy)]
+#[derive(Debug, Clone)]
 pub struct Wanted {
     /// The slot.
     pub slot: SlotId,
@@ -77,12 +82,16 @@ pub struct Wanted {
     /// The reader's unit (SI per unit), to which the stability of printed
     /// digits refers.
     pub scale: f64,
+    /// Limits (SI) whose probability of being exceeded is wanted.
+    pub limits: Vec<f64>,
 }
 
 /// One block's estimates of all results.
 struct BlockTally {
     impossible: u64,
     results: Vec<Option<Tally>>,
+    /// Trials kept of each result, and how many of them exceed each limit.
+    counts: Vec<(usize, Vec<usize>)>,
 }
 
 /// Draws and evaluates until the wanted slots are known to `trials`' demand.
@@ -146,7 +155,14 @@ impl Workspace {
                 column.iter_mut().for_each(|v| *v = near(*v, w.centre));
             }
         }
-        BlockTally { impossible, results: self.columns.iter_mut().map(|c| tally(c)).collect() }
+        let over = |column: &[f64], limit: f64| column.iter().filter(|v| **v > limit).count();
+        let counts = self
+            .columns
+            .iter()
+            .zip(wanted)
+            .map(|(c, w)| (c.len(), w.limits.iter().map(|limit| over(c, *limit)).collect()))
+            .collect();
+        BlockTally { impossible, results: self.columns.iter_mut().map(|c| tally(c)).collect(), counts }
     }
 
     /// Keeps the possible trials of one batch and counts the others. A crash
@@ -190,7 +206,20 @@ fn summed(blocks: &[BlockTally], wanted: &[Wanted]) -> Sampling {
             Some(sampled)
         })
         .collect();
-    Sampling { trials: (blocks.len() * BLOCK) as u64, impossible, stable, results }
+    let above = (0..wanted.len()).map(|i| exceeded(blocks, i, wanted[i].limits.len())).collect();
+    Sampling { trials: (blocks.len() * BLOCK) as u64, impossible, stable, results, above }
+}
+
+/// Shares of the trials of result `i` above each of its limits, with the
+/// standard errors of counting.
+fn exceeded(blocks: &[BlockTally], i: usize, limits: usize) -> Vec<(f64, f64)> {
+    let kept: usize = blocks.iter().map(|b| b.counts[i].0).sum();
+    let share = |limit: usize| {
+        let over: usize = blocks.iter().map(|b| b.counts[i].1[limit]).sum();
+        let p = over as f64 / kept.max(1) as f64;
+        (p, (p * (1.0 - p) / kept.max(1) as f64).sqrt())
+    };
+    (0..limits).map(share).collect()
 }
 
 fn join(tallies: &[Tally]) -> Sampled {
@@ -200,10 +229,11 @@ fn join(tallies: &[Tally]) -> Sampled {
     let (high, high_error) = mean_and_error(tallies, |t| t.high);
     let (short_low, _) = mean_and_error(tallies, |t| t.short_low);
     let (short_high, _) = mean_and_error(tallies, |t| t.short_high);
+    let (least, _) = mean_and_error(tallies, |t| t.least);
     let u = variance.max(0.0).sqrt();
     let u_error = if u > 0.0 { variance_error / (2.0 * u) } else { 0.0 };
     let errors = [value_error, u_error, low_error, high_error];
-    Sampled { value, u, low, high, shortest: (short_low, short_high), errors }
+    Sampled { value, u, low, high, shortest: (short_low, short_high), least, errors }
 }
 
 /// Mean over blocks and its standard error (7.9.4, steps f and g).

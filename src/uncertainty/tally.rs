@@ -12,6 +12,8 @@ pub(super) struct Tally {
     pub(super) high: f64,
     pub(super) short_low: f64,
     pub(super) short_high: f64,
+    /// One trial in twenty lies below it.
+    pub(super) least: f64,
 }
 
 /// Takes the estimates from the possible trials of a block; reorders them.
@@ -32,7 +34,8 @@ pub(super) fn tally(trials: &mut [f64]) -> Option<Tally> {
     let low = trials[below.max(1) - 1];
     let high = trials[(below.max(1) - 1 + inside).min(n - 1)];
     let (short_low, short_high) = shortest(trials, inside);
-    Some(Tally { mean, variance, low, high, short_low, short_high })
+    let least = trials[outside.max(1) - 1];
+    Some(Tally { mean, variance, low, high, short_low, short_high, least })
 }
 
 /// The sum over the trials, in eight sums side by side: one sum would wait for

@@ -9,6 +9,7 @@ mod head;
 mod impact;
 mod phase;
 mod quantity;
+mod question;
 mod stretch;
 mod unit;
 
@@ -71,6 +72,7 @@ const KEYS: &[&str] = &[
     "impact",
     "method_error",
     "answer",
+    "question",
 ];
 
 fn whole(
@@ -105,7 +107,18 @@ fn whole(
     let units = unit::units(root, &scope, cx);
     let error_changes = head::error_changes(root, errors, cx);
     let answers = head::answers(root, cx);
-    let case = Case { identity: identity?, gravity, points, tests, units, impacts, error_changes, answers };
+    let questions = question::questions(root, cx);
+    let case = Case {
+        identity: identity?,
+        gravity,
+        points,
+        tests,
+        units,
+        impacts,
+        error_changes,
+        answers,
+        questions,
+    };
     Some(case)
 }
 

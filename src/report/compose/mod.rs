@@ -6,6 +6,7 @@ mod budget;
 mod diagram;
 mod method_cards;
 mod notices;
+mod questions;
 mod register;
 mod results;
 mod worked;
@@ -26,6 +27,7 @@ pub fn compose(outcome: &Outcome) -> Option<Document> {
         paragraphs: caution::FULL.iter().map(|p| (*p).to_string()).collect(),
     });
     blocks.extend(results::section(outcome, analysis));
+    blocks.extend(questions::section(analysis));
     blocks.extend(diagram::section(analysis));
     blocks.extend(notices::section(outcome));
     blocks.extend(register::section(analysis));
