@@ -185,6 +185,7 @@ fn every_page_of_help_has_an_example() {
         &["new", "--help"],
         &["methods", "--help"],
         &["completions", "--help"],
+        &["changes", "--help"],
     ] {
         let output = retrodict(root()).args(args).output().unwrap();
         let help = text(&output.stdout);
@@ -246,6 +247,27 @@ fn methods_are_listed_and_shown_with_formula_symbols_limits_and_source() {
     assert!(page.contains("v_0 = √(v_1² + 2 g f d)"), "{page}");
     let output = retrodict(root()).args(["methods", "brakin"]).output().unwrap();
     assert!(output.status.code() == Some(2) && text(&output.stderr).contains("did you mean braking?"));
+}
+
+#[test]
+fn changes_are_told_entry_by_entry() {
+    let folder = tempfile::tempdir().unwrap();
+    let new = common::text("cases/quarry-road.toml")
+        .replace("\"12.4 ± 0.3 m (95 %)\"", "\"12.9 ± 0.3 m (95 %)\"")
+        .replace("date = \"2026-03-09\"\n", "")
+        .replace("method = \"momentum\"", "method = \"momentum\"\nnote = \"seen by two\"");
+    std::fs::write(folder.path().join("new.toml"), new).unwrap();
+    let output = retrodict(folder.path()).args(["changes", &demo(), "new.toml"]).output().unwrap();
+    assert_eq!(output.status.code(), Some(0));
+    let wanted = "unit.A.pre_impact.travel 1.distance was \"12.4 ± 0.3 m (95 %)\" and is now \"12.9 ± 0.3 m (95 %)\"\n\
+                  impact 1.note is new: \"seen by two\"\ncase.date is gone; it was \"2026-03-09\"\n3 entries differ.";
+    assert!(text(&output.stdout).starts_with(wanted), "{}", text(&output.stdout));
+    let output = retrodict(folder.path()).args(["changes", "new.toml", "new.toml"]).output().unwrap();
+    assert_eq!(text(&output.stdout), "No entry differs.\n");
+    std::fs::write(folder.path().join("bad.toml"), "[x").unwrap();
+    let output = retrodict(folder.path()).args(["changes", "bad.toml", "none.toml"]).output().unwrap();
+    assert_eq!(output.status.code(), Some(2));
+    assert_eq!(text(&output.stderr).matches("STOP").count(), 2);
 }
 
 #[test]

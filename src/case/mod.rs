@@ -7,6 +7,7 @@
 //! `model.rs`; unknown keys are errors.
 
 mod check;
+mod flat;
 mod lexer;
 mod model;
 mod notation;
@@ -14,6 +15,7 @@ mod raw;
 mod survey;
 
 pub use check::{Checked, LARGEST, Load, read};
+pub use flat::{Flat, flat};
 pub use model::{
     Answer, Begin, Braking, Case, Direction, Drag, End, Entry, ErrorChange, FrictionTest, Identity, Impact,
     ImpactMethod, Phase, Point, PointId, Question, StandsFor, Stretch, StretchLength, TestId, Unit, UnitId,

@@ -151,6 +151,12 @@ impl<'a> Item<'a> {
         }
     }
 
+    /// The value as it is typed.
+    pub(super) fn typed(&self) -> String {
+        let span = self.value.span();
+        self.source.get(span.start..span.end).unwrap_or_default().trim().to_string()
+    }
+
     /// What sort of value it is, in words.
     pub(super) fn sort(&self) -> &'static str {
         match self.value.get_ref() {

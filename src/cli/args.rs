@@ -51,6 +51,9 @@ pub enum Command {
                             retrodict solve cases/quarry-road.toml"
     )]
     Methods(MethodsArgs),
+    /// List what differs between two versions of a case, entry by entry.
+    #[command(after_help = "Example:\n  retrodict changes cases/quarry-road.toml new-version.toml")]
+    Changes(ChangesArgs),
     /// Print a completion script for a shell.
     #[command(
         after_help = "Example:\n  retrodict completions bash > retrodict.bash\n\nThen: retrodict check \
@@ -73,6 +76,15 @@ pub struct NewArgs {
 pub struct MethodsArgs {
     /// The method to show; without it, all in a list.
     pub name: Option<String>,
+}
+
+/// Arguments of `changes`.
+#[derive(Debug, Args)]
+pub struct ChangesArgs {
+    /// The earlier version.
+    pub old: PathBuf,
+    /// The later version.
+    pub new: PathBuf,
 }
 
 /// Arguments of `completions`.

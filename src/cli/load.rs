@@ -35,7 +35,7 @@ pub(super) fn load(path: &Path, options: Options) -> Option<Outcome> {
     Some(analyse(&path.to_string_lossy(), &text, &beside, options))
 }
 
-fn read(path: &Path) -> Result<String, String> {
+pub(super) fn read(path: &Path) -> Result<String, String> {
     let name = path.display();
     let size = std::fs::metadata(path).map_err(|e| format!("{name}: {e}"))?;
     if size.is_dir() {

@@ -5,6 +5,7 @@
 //! A new command is one file here and one variant in `args.rs`.
 
 mod args;
+mod changes;
 mod check;
 mod completions;
 mod load;
@@ -28,6 +29,7 @@ pub fn run() -> u8 {
             Command::Print(args) => print::run(&args),
             Command::New(args) => new::run(&args),
             Command::Methods(args) => methods::run(&args),
+            Command::Changes(args) => changes::run(&args),
             Command::Completions(args) => completions::run(&args),
         },
         Err(error) => {
