@@ -61,7 +61,14 @@ impl Demo {
         let values = plan.evaluate(&plan.estimates()).values;
         let wanted = plan.results.iter().map(|r| {
             let scale = case.identity.system.unit(plan.slot(r.slot).kind).1;
-            Wanted { slot: r.slot, stage: r.stage, centre: values[r.slot.0], scale, limits: Vec::new() }
+            Wanted {
+                slot: r.slot,
+                stage: r.stage,
+                centre: values[r.slot.0],
+                scale,
+                floor: f64::NEG_INFINITY,
+                limits: Vec::new(),
+            }
         });
         let wanted = wanted.collect();
         Ok(Demo { plan, wanted, ziggurat: Ziggurat::default() })

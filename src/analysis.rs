@@ -8,7 +8,7 @@ use crate::case::{Case, Checked, Question};
 use crate::diag::{Notice, Notices, Severity, SourceFile, nearest};
 use crate::method::MethodError;
 use crate::physics::METHODS;
-use crate::plan::{Evaluation, Named, Plan, Planned, SlotId, SlotRefusal, Stage, backward};
+use crate::plan::{Evaluation, Named, Plan, Planned, SlotId, SlotRefusal, Sought, Stage, backward};
 use crate::rules::{Facts, Withheld, apply};
 use crate::sheet::{Line, Numbering, Row, lines, register};
 use crate::uncertainty::{Band, Sampling, Trials, Wanted, bands, linear, sample, standard_uncertainty};
@@ -127,7 +127,7 @@ fn evaluate(case: Case, plan: Plan, options: Options) -> (Analysis, Vec<Notice>)
         (0..plan.results.len()).filter(|i| evaluation.value(plan.results[*i].slot).is_some()).collect();
     let wanted = wanted(&case, &plan, &evaluation, &standing);
     let sampling = if wanted.is_empty() {
-        Sampling { trials: 0, impossible: 0, stable: true, results: Vec::new(), above: Vec::new() }
+        Sampling::default()
     } else {
         sample(&plan, &wanted, options.seed, options.trials)
     };
@@ -187,10 +187,11 @@ type Refused = (Named, String);
 /// What is to be known of each result that has a value.
 fn wanted(case: &Case, plan: &Plan, evaluation: &Evaluation, standing: &[usize]) -> Vec<Wanted> {
     let of = |i: &usize| {
-        let Named { slot, stage, ref id, .. } = plan.results[*i];
+        let Named { slot, stage, sought, ref id, .. } = plan.results[*i];
+        let floor = if sought == Sought::ImpactSpeed { 0.0 } else { f64::NEG_INFINITY };
         let scale = case.identity.system.unit(plan.slot(slot).kind).1;
         let limits = case.questions.iter().filter(|q| q.of == *id).map(|q| q.above.dist.estimate());
-        Wanted { slot, stage, centre: evaluation.values[slot.0], scale, limits: limits.collect() }
+        Wanted { slot, stage, centre: evaluation.values[slot.0], scale, floor, limits: limits.collect() }
     };
     standing.iter().map(of).collect()
 }

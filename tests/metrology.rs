@@ -61,8 +61,14 @@ fn both(node: &'static dyn Node, inputs: &[Dist], trials: u64) -> (Linear, Sampl
     let (plan, out) = plan(node, inputs);
     let evaluation = plan.evaluate(&plan.estimates());
     let line = linear(&plan, &evaluation, out).expect("a value");
-    let wanted =
-        [Wanted { slot: out, stage: Stage::Impact, centre: line.value, scale: 1.0, limits: Vec::new() }];
+    let wanted = [Wanted {
+        slot: out,
+        stage: Stage::Impact,
+        centre: line.value,
+        scale: 1.0,
+        floor: f64::NEG_INFINITY,
+        limits: Vec::new(),
+    }];
     let sampling = sample(&plan, &wanted, 101, Trials::Fixed(trials));
     assert_eq!((sampling.trials, sampling.impossible), (trials, 0));
     let band = bands(vec![Some(line.clone())], &sampling, &wanted).remove(0).expect("a band");
@@ -452,8 +458,14 @@ fn bits(threads: usize, seed: u64) -> (Vec<u64>, String) {
             normal(1.0, 2.0),
         ];
         let (plan, out) = plan(FourSum::NODE, &inputs);
-        let wanted =
-            [Wanted { slot: out, stage: Stage::Impact, centre: 1.0, scale: 1.0, limits: Vec::new() }];
+        let wanted = [Wanted {
+            slot: out,
+            stage: Stage::Impact,
+            centre: 1.0,
+            scale: 1.0,
+            floor: f64::NEG_INFINITY,
+            limits: Vec::new(),
+        }];
         let sampling = sample(&plan, &wanted, seed, Trials::Fixed(170_000));
         let s = sampling.results[0].unwrap();
         let all = [s.value, s.u, s.low, s.high, s.shortest.0, s.shortest.1].into_iter().chain(s.errors);

@@ -536,3 +536,63 @@ fn an_answer_says_which_of_several_warnings_it_is_about() {
     let empty = demo() + &answer.replace("no mark between", "");
     fires("STOP CF-3", &empty, &demo());
 }
+
+#[test]
+fn forward_takes_no_evidence_from_after_the_impact() {
+    let head = "format = 1\n[case]\nnumber = \"1\"\ntitle = \"x\"\n";
+    let unit = |n: &str, before: &str, after: &str| {
+        format!(
+            "[unit.{n}]\nmass = \"1400 kg\"\n[unit.{n}.pre_impact]\n{before}\n[unit.{n}.post_impact]\n{after}\n"
+        )
+    };
+    let along = "direction = \"along the line\"\nspeed = \"12 m/s\"";
+    let impact = "[[impact]]\nunits = [\"A\", \"B\"]\nmethod = \"in-line\"\nrestitution = \"0.2\"\n";
+    let clean = head.to_string() + &unit("A", along, "") + &unit("B", "standing = true", "") + impact;
+    let seeded = head.to_string()
+        + &unit("A", along, "")
+        + &unit("B", "standing = true", &along.replace("12", "30"))
+        + impact;
+    fires("STOP P-3", &seeded, &clean);
+}
+
+#[test]
+fn m12_speaks_of_exact_entries_too() {
+    let case = |b: &str| {
+        format!(
+            "format = 1\n[case]\nnumber = \"1\"\ntitle = \"x\"\n[unit.A]\nmass = \"1400 kg\"\n[unit.B]\nmass = \"1200 kg\"\n\
+             [method_error.recorded_delta_v]\nvalue = \"1\"\nreason = \"x\"\n[[impact]]\nunits = [\"A\", \"B\"]\n\
+             method = \"in-line\"\nrestitution = \"0.1\"\ndelta_v = {{ A = \"6 m/s\", B = \"{b} m/s\" }}\n"
+        )
+    };
+    fires("WARN M-12", &case("20"), &case("7"));
+}
+
+#[test]
+fn uncertainty_said_twice_and_directed_roads_are_refused() {
+    for text in ["\"12.4(3) ± 0.3 m (95 %)\"", "\"12.4 ± 0.3(1) m (95 %)\"", "\"12.1..12.7(2) m\""] {
+        fires("STOP CF-5", &changed(&demo(), &[("\"12.4 ± 0.3 m (95 %)\"", text)]), &demo());
+    }
+    let road = |v: &str| {
+        demo() + &format!("\n[method_error.road_impulse]\nvalue = \"{v} ± 1 (1 sd)\"\nreason = \"x\"\n")
+    };
+    fires("STOP CF-8", &road("1.3"), &road("0"));
+}
+
+#[test]
+fn a_whole_path_beside_another_stretch_is_found() {
+    let more = "[[unit.A.post_impact.travel]]\ndistance = \"3 m\"\nwheels = \"all locked\"\ngrade = \"level\"\nfriction = \"F1\"\n";
+    fires("STOP CF-11", &changed(&demo(), &[("[unit.B]\n", &format!("{more}\n[unit.B]\n"))]), &demo());
+}
+
+/// Trials in which the slow unit of an in-line impact would have come from the
+/// other side are impossible, as they are in the plane.
+#[test]
+fn b6_speeds_against_the_stated_sense_are_counted_on_one_line() {
+    let base =
+        text("cases/in-line-standing.toml").replace("standing = true", "direction = \"along the line\"");
+    let outcome = run(&(base + "restitution = \"0.115 ± 0.01\"\n"));
+    let a = outcome.analysis.unwrap();
+    assert!(a.sampling.impossible > 0 && a.sampling.impossible_travel == 0);
+    let b = a.results.iter().find(|r| r.named.id == "B.impact_speed");
+    assert!(b.is_none_or(|b| b.band.sampled.low >= 0.0));
+}

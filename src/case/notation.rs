@@ -175,7 +175,8 @@ pub fn spread_alone(text: &str, kind: Kind, default: Option<Spread>) -> Result<D
     };
     let (_, spread) = body.split_at(0, length);
     let spread_kind = tag.map(|(s, _)| s).or(default).ok_or_else(|| bare(whole))?;
-    let (number, unit) = number_and_unit(spread, kind)?;
+    let (number, unit) = plain(spread)?;
+    let unit = unit_of(unit, kind)?;
     half_width(number.value * unit.factor, spread).map(|half| spread_kind.around(0.0, half))
 }
 
@@ -233,8 +234,8 @@ fn plus_minus(
     whole: Piece<'_>,
 ) -> Result<Dist, Fault> {
     let means = means.ok_or_else(|| bare(whole))?;
-    let (half, half_unit) = number(spread)?;
-    let (value, value_unit) = number(centre)?;
+    let (half, half_unit) = plain(spread)?;
+    let (value, value_unit) = plain(centre)?;
     // The unit may stand behind the value, behind the ±, or behind both.
     let written = if half_unit.text.is_empty() { value_unit } else { half_unit };
     let relative = half_unit.text == "%" && kind != Kind::Ratio;
@@ -257,10 +258,11 @@ fn range(body: Piece<'_>, kind: Kind) -> Result<Dist, Fault> {
         pieces.push(left);
         rest = right;
     }
-    let (last, unit) = number_and_unit(rest, kind)?;
+    let (last, last_unit) = plain(rest)?;
+    let unit = unit_of(last_unit, kind)?;
     let mut values = Vec::new();
     for piece in pieces {
-        let (value, own) = number(piece)?;
+        let (value, own) = plain(piece)?;
         let factor = if own.text.is_empty() { unit.factor } else { unit_of(own, kind)?.factor };
         values.push(value.value * factor);
     }
@@ -276,6 +278,20 @@ fn range(body: Piece<'_>, kind: Kind) -> Result<Dist, Fault> {
             UNREADABLE,
             "a range has two numbers, or three with the likeliest in the middle",
             "lo..hi or lo..likeliest..hi",
+        )),
+    }
+}
+
+/// A number without brackets: beside a ± or in a range they would say the
+/// uncertainty twice.
+fn plain(piece: Piece<'_>) -> Result<(Number, Piece<'_>), Fault> {
+    let (value, unit) = number(piece)?;
+    match value.last_digit {
+        None => Ok((value, unit)),
+        Some(_) => Err(piece.fault(
+            UNREADABLE,
+            "brackets and a ± or a range say the uncertainty twice",
+            "one of the two",
         )),
     }
 }

@@ -15,7 +15,22 @@ use crate::units::Kind;
 
 const SENSES: &str =
     "direction = \"along the line\" (the way the first unit travels) or \"against the line\"";
-const BEFORE: &str = "before impact";
+
+/// Which side of the impact a velocity belongs to.
+#[derive(Clone, Copy)]
+enum When {
+    Before,
+    After,
+}
+
+impl When {
+    fn words(self) -> &'static str {
+        match self {
+            When::Before => "before impact",
+            When::After => "after impact",
+        }
+    }
+}
 
 /// One unit in the impact.
 struct Party<'a> {
@@ -37,7 +52,13 @@ pub(super) fn plan(w: &mut Backward<'_>, impact: &Impact, separation: &[Option<S
         let speed = separation.get(id.0).copied().flatten();
         let mass = w.mass(id);
         let against = before(unit).is_some_and(|p| matches!(p.direction, Some(Direction::Against(_))));
-        Party { unit, mass, after: signed_after(w, unit, speed), before: known_before(w, unit), against }
+        Party {
+            unit,
+            mass,
+            after: signed_after(w, unit, speed),
+            before: known_before(w, unit, i == 0),
+            against,
+        }
     });
     if a.against {
         let message = format!("{} is named first, so the line points the way it travels", a.unit.id);
@@ -46,7 +67,9 @@ pub(super) fn plan(w: &mut Backward<'_>, impact: &Impact, separation: &[Option<S
         return;
     }
     let recorded = impact.delta_v.iter().all(Option::is_some);
-    if let Some(phase) = before(b.unit).filter(|p| !recorded && !p.standing && p.direction.is_none()) {
+    if let Some(phase) =
+        before(b.unit).filter(|p| !recorded && !p.standing && p.speed.is_none() && p.direction.is_none())
+    {
         let message = format!("{} before impact: on one line a direction is along or against it", b.unit.id);
         w.notices.push(Notice::stop("P-2", message).at(phase.place).expected(SENSES));
     }
@@ -76,20 +99,20 @@ fn signed(
     unit: &Unit,
     phase: &Phase,
     speed: SlotId,
-    symbol: String,
-    when: &str,
+    (symbol, when): (String, When),
+    first: bool,
 ) -> Option<SlotId> {
-    let first = when == BEFORE && w.case.impacts.first().is_some_and(|i| w.unit(i.units[0]).id == unit.id);
     match &phase.direction {
         Some(Direction::Along(_)) => Some(speed),
         // The line points the way the unit named first travels.
-        None if first => Some(speed),
+        None if first && matches!(when, When::Before) => Some(speed),
         Some(Direction::Against(place)) => {
-            let title = format!("Velocity of {} {when}, signed along the line", unit.id);
+            let title = format!("Velocity of {} {}, signed along the line", unit.id, when.words());
             Some(w.b.call(line::Reversed::NODE, &[speed], symbol, title, Some(*place)))
         }
         _ => {
-            let message = format!("{} {when}: on one line a direction is along or against it", unit.id);
+            let message =
+                format!("{} {}: on one line a direction is along or against it", unit.id, when.words());
             w.notices.push(Notice::stop("P-2", message).at(phase.place).expected(SENSES));
             None
         }
@@ -98,10 +121,10 @@ fn signed(
 
 fn signed_after(w: &mut Backward<'_>, unit: &Unit, speed: Option<SlotId>) -> Option<SlotId> {
     let phase = after(unit)?;
-    signed(w, unit, phase, speed?, format!("w′_{{{}}}", unit.id), "after impact")
+    signed(w, unit, phase, speed?, (format!("w′_{{{}}}", unit.id), When::After), false)
 }
 
-fn known_before(w: &mut Backward<'_>, unit: &Unit) -> Option<(SlotId, SlotId)> {
+fn known_before(w: &mut Backward<'_>, unit: &Unit, first: bool) -> Option<(SlotId, SlotId)> {
     let phase = before(unit)?;
     if phase.standing {
         let name = format!("speed of {} before impact: it stood", unit.id);
@@ -109,7 +132,7 @@ fn known_before(w: &mut Backward<'_>, unit: &Unit) -> Option<(SlotId, SlotId)> {
         return Some((zero, zero));
     }
     let speed = w.b.entry(format!("v_{{{}}}", unit.id), phase.speed.as_ref()?, Role::Measured);
-    let signed = signed(w, unit, phase, speed, format!("w_{{{}}}", unit.id), BEFORE)?;
+    let signed = signed(w, unit, phase, speed, (format!("w_{{{}}}", unit.id), When::Before), first)?;
     Some((signed, speed))
 }
 
@@ -237,6 +260,16 @@ fn both_unknown(w: &mut Backward<'_>, impact: &Impact, [a, b]: [&Party<'_>; 2], 
 /// Forward: both velocities before impact and the restitution are known.
 fn forward(w: &mut Backward<'_>, impact: &Impact, parties: [&Party<'_>; 2], before: [SlotId; 2]) {
     let place = impact.place;
+    let told = |p: &&Party<'_>| after(p.unit).is_some_and(|a| a.direction.is_some() || p.after.is_some());
+    if let Some(party) = parties.iter().find(|p| told(p)) {
+        let message = format!(
+            "both speeds before impact are given, so what follows is worked out; yet {} has entries after impact",
+            party.unit.id
+        );
+        let notice = Notice::stop("P-3", message).at(after(party.unit).map(|p| p.place));
+        w.notices.push(notice.expected("one speed before impact left out, or nothing after it"));
+        return;
+    }
     let Some(mass) = masses(w, parties, place) else { return };
     let Some(e) = restitution(w, impact.restitution.as_ref()) else {
         w.lacks("speeds after impact need the restitution".into(), place, "add restitution to the impact");
@@ -322,6 +355,11 @@ fn from_delta_vs(w: &mut Backward<'_>, impact: &Impact, parties: [&Party<'_>; 2]
         );
         return;
     };
+    if let Some(party) = parties.iter().find(|p| p.after.is_some() || p.before.is_some()) {
+        let message = format!("the speed of {} is not held against the delta-Vs", party.unit.id);
+        let hint = "solve the impact from the speeds instead, and compare the two";
+        w.notices.push(Notice::warn("P-6", message).at(party.unit.place).hint(hint));
+    }
     let readings = [0, 1].map(|i| {
         let id = &parties[i].unit.id;
         let k = w.method_error(format!("k_{{ΔV,{id}}}"), &line::RECORDER_ERROR, &format!(", {id}"));

@@ -145,8 +145,8 @@ fn along_path(
             }
         });
     }
-    // A path has at least two points, so there is at least one piece.
-    total.unwrap_or(w.gravity)
+    // The case's check gives two points at least; no piece is no length.
+    total.unwrap_or_else(|| w.b.assumed(symbol, Kind::Length, 0.0, "a path without pieces", "no points"))
 }
 
 fn drag(

@@ -20,12 +20,16 @@ pub(super) fn rule(facts: &Facts<'_>) -> Vec<Finding> {
         .map(|i| (i.dist.cdf(i.bounds.0) + 1.0 - i.dist.cdf(i.bounds.1), i))
         .filter(|(p, i)| *p > 0.002 && !i.dist.is_exact())
         .max_by(|a, b| a.0.total_cmp(&b.0));
-    if share > 0.5 {
+    let travel = facts.sampling.impossible_travel as f64 / facts.sampling.trials.max(1) as f64;
+    // Surely more than half: three standard errors of counting beyond it.
+    let half = 0.5 + 1.5 / (facts.sampling.trials.max(1) as f64).sqrt();
+    if share > half {
         let message =
             format!("{percent} % of the trials are physically impossible: the entries contradict each other");
         let notice =
             Notice::stop("B-6", message).hint("look at the refused lines, directions and masses first");
-        return vec![Finding { notice, withheld: Withheld::All }];
+        let withheld = if travel > half { Withheld::All } else { Withheld::Impact };
+        return vec![Finding { notice, withheld }];
     }
     let mut notice = Notice::warn(
         "B-6",

@@ -15,7 +15,7 @@ pub(super) fn rule(facts: &Facts<'_>) -> Vec<Finding> {
             let Drag::Friction { test, share } = &stretch.drag else { return None };
             let test = &facts.case.tests[test.0];
             let wheels = match share.entered.as_str() {
-                "all locked" => Braking::Locked,
+                "all locked" | "sliding sideways" => Braking::Locked,
                 "abs" => Braking::Abs,
                 _ => return None,
             };

@@ -114,6 +114,14 @@ impl Facts<'_> {
         format!("{}{gap}{unit}", significant(value / scale, 3))
     }
 
+    /// Size of the terms that add up to a slot: what a difference is held
+    /// against.
+    fn size(&self, slot: SlotId) -> f64 {
+        let row = self.evaluation.row(slot).iter();
+        let terms = self.plan.inputs.iter().zip(row).map(|(i, slope)| (i.dist.estimate() * slope).abs());
+        terms.filter(|t| t.is_finite()).sum()
+    }
+
     /// Standard uncertainty of any slot, by linear propagation.
     fn u(&self, slot: SlotId) -> f64 {
         standard_uncertainty(self.plan, self.evaluation, slot)

@@ -23,7 +23,7 @@ pub(super) fn rule(facts: &Facts<'_>) -> Vec<Finding> {
         let code = if ENERGY.contains(&card.id) { "M-9" } else { "P-4" };
         let mut notice = Notice::stop(code, message).at(call.place);
         let in_impact = matches!(card.method, "momentum" | "in-line");
-        if in_impact {
+        if card.method == "momentum" {
             let hint = "was a bearing entered as an angle, or the other way round? check directions, masses and speeds";
             notice = notice.hint(hint);
         }

@@ -217,6 +217,23 @@ mod tests {
     /// draws against the closed forms; t's own standard deviation is
     /// scale √(ν/(ν−2)) (JCGM 101, 6.4.9.4).
     #[test]
+    fn t_draws_have_the_tails_of_their_degrees_of_freedom() {
+        let z = Ziggurat::default();
+        let n = 400_000;
+        for dof in [3, 5, 40] {
+            let dist = Dist::StudentT { mean: 0.0, scale: 1.0, dof };
+            let mut column = vec![0.0; n];
+            dist.fill(&mut column, &z, &mut Generator::new(5, u64::from(dof)));
+            for at in [-8.0, -5.0, -2.0, 0.3, 5.0] {
+                let p = dist.cdf(at);
+                let below = column.iter().filter(|x| **x < at).count() as f64 / n as f64;
+                let allowed = 4.5 * (p * (1.0 - p) / n as f64).sqrt() + 2.0 / n as f64;
+                assert!((below - p).abs() < allowed, "ν = {dof} at {at}: {below} for {p}");
+            }
+        }
+    }
+
+    #[test]
     fn draws_have_the_stated_moments() {
         let z = Ziggurat::default();
         let n = 400_000;

@@ -53,12 +53,14 @@ pub struct Sampled {
 }
 
 /// All results' distributions.
-#[derive(Debug, Clone)]
+#[derive(Debug, Clone, Default)]
 pub struct Sampling {
     /// Trials made.
     pub trials: u64,
-    /// Trials that were physically impossible; the rest count.
+    /// Trials that were physically impossible in some result.
     pub impossible: u64,
+    /// Those that were so in a travel already.
+    pub impossible_travel: u64,
     /// Whether every printed digit is stable.
     pub stable: bool,
     /// The results, in the order asked for; `None` where too few trials were
@@ -82,13 +84,16 @@ pub struct Wanted {
     /// The reader's unit (SI per unit), to which the stability of printed
     /// digits refers.
     pub scale: f64,
+    /// Least value that is physically possible, SI: a speed at impact below
+    /// zero would have come from the other side.
+    pub floor: f64,
     /// Limits (SI) whose probability of being exceeded is wanted.
     pub limits: Vec<f64>,
 }
 
 /// One block's estimates of all results.
 struct BlockTally {
-    impossible: u64,
+    impossible: (u64, u64),
     results: Vec<Option<Tally>>,
     /// Trials kept of each result, and how many of them exceed each limit.
     counts: Vec<(usize, Vec<usize>)>,
@@ -144,11 +149,12 @@ impl Workspace {
     ) -> BlockTally {
         let mut rng = Generator::new(seed, block as u64);
         self.columns.iter_mut().for_each(Vec::clear);
-        let mut impossible = 0;
+        let mut impossible = (0, 0);
         for _ in 0..BLOCK / WIDTH {
             self.block.draw(plan, ziggurat, &mut rng);
             self.block.compute(plan);
-            impossible += self.keep(wanted);
+            let (any, travel) = self.keep(wanted);
+            impossible = (impossible.0 + any, impossible.1 + travel);
         }
         for (column, w) in self.columns.iter_mut().zip(wanted) {
             if plan.slot(w.slot).kind == Kind::Angle {
@@ -168,12 +174,14 @@ impl Workspace {
     /// Keeps the possible trials of one batch and counts the others. A crash
     /// that is impossible in one result of its impact is possible in none of
     /// them; what was found before the impact was looked at stands by itself.
-    fn keep(&mut self, wanted: &[Wanted]) -> u64 {
+    /// Gives the impossible trials, and those that were so in a travel already.
+    fn keep(&mut self, wanted: &[Wanted]) -> (u64, u64) {
         // Zero where every result of the stage is a number, else not a number.
         let (mut travel, mut impact) = ([0.0; WIDTH], [0.0; WIDTH]);
         for w in wanted {
             let sum = if w.stage == Stage::Impact { &mut impact } else { &mut travel };
-            sum.iter_mut().zip(self.block.trials(w.slot)).for_each(|(sum, v)| *sum += v * 0.0);
+            let possible = |v: f64| if v >= w.floor { 0.0 } else { f64::NAN };
+            sum.iter_mut().zip(self.block.trials(w.slot)).for_each(|(sum, v)| *sum += possible(*v));
         }
         let joint: Vec<usize> = (0..WIDTH).filter(|t| impact[*t] == 0.0).collect();
         for (column, w) in self.columns.iter_mut().zip(wanted) {
@@ -183,7 +191,8 @@ impl Workspace {
                 Stage::Travel => column.extend(trials.iter().filter(|v| v.is_finite())),
             }
         }
-        travel.iter().zip(&impact).filter(|(t, i)| **t + **i != 0.0).count() as u64
+        let any = travel.iter().zip(&impact).filter(|(t, i)| **t + **i != 0.0).count();
+        (any as u64, travel.iter().filter(|t| **t != 0.0).count() as u64)
     }
 }
 
@@ -195,7 +204,8 @@ fn near(angle: f64, centre: f64) -> f64 {
 
 /// Joins the blocks in the order of their numbers.
 fn summed(blocks: &[BlockTally], wanted: &[Wanted]) -> Sampling {
-    let impossible = blocks.iter().map(|b| b.impossible).sum();
+    let impossible = blocks.iter().map(|b| b.impossible.0).sum();
+    let impossible_travel = blocks.iter().map(|b| b.impossible.1).sum();
     let mut stable = true;
     let results = (0..wanted.len())
         .map(|i| {
@@ -207,7 +217,7 @@ fn summed(blocks: &[BlockTally], wanted: &[Wanted]) -> Sampling {
         })
         .collect();
     let above = (0..wanted.len()).map(|i| exceeded(blocks, i, wanted[i].limits.len())).collect();
-    Sampling { trials: (blocks.len() * BLOCK) as u64, impossible, stable, results, above }
+    Sampling { trials: (blocks.len() * BLOCK) as u64, impossible, impossible_travel, stable, results, above }
 }
 
 /// Shares of the trials of result `i` above each of its limits, with the

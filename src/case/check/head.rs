@@ -69,21 +69,31 @@ pub(super) fn error_changes(root: &Section<'_>, known: &[MethodError], cx: &mut 
         };
         let Some(section) = cx.table(&item, format!("method_error.{id}")) else { continue };
         section.only(&["value", "reason"], &mut cx.notices);
-        // A factor on the drag or the delta-V lies round one: 3 % is no factor.
-        let bounds = match error.dist.estimate() {
-            1.0 => (0.5, 1.5),
-            0.0 => (f64::NEG_INFINITY, f64::INFINITY),
-            _ => (0.0, f64::INFINITY),
-        };
-        let field =
-            Field { key: "value", kind: error.kind, bounds, plausible: (f64::NEG_INFINITY, f64::INFINITY) };
+        let bounds = if error.dist.estimate() == 0.0 { UNLIMITED } else { (0.0, f64::INFINITY) };
+        let field = Field { key: "value", kind: error.kind, bounds, plausible: UNLIMITED };
         let reason = cx.required_text(&section, "reason", "why the case changes this method error");
         let entry = quantity::required(&section, field, error.title, &Said::default(), cx);
+        if let Some(expected) = entry.as_ref().and_then(|e| misfit(error, e.dist.estimate())) {
+            let message = format!("{}: this value cannot be meant", error.title);
+            cx.notices.push(Notice::stop("CF-8", message).at(item.place()).expected(expected));
+        }
         if let (Some(entry), Some(reason)) = (entry, reason) {
             changes.push(ErrorChange { id: id.into(), entry, reason });
         }
     }
     changes
+}
+
+const UNLIMITED: (f64, f64) = (f64::NEG_INFINITY, f64::INFINITY);
+
+/// What a method error's value must be like, if it is not: factors lie round
+/// one, and the road has no direction of its own.
+fn misfit(error: &MethodError, estimate: f64) -> Option<&'static str> {
+    let standard = error.dist.estimate();
+    if standard == 1.0 && !(0.5..=1.5).contains(&estimate) {
+        return Some("a factor round one, such as \"1 ± 0.03 (1 sd)\": 0.5 to 1.5");
+    }
+    (standard == 0.0 && estimate != 0.0).then_some("zero on the average, such as \"0 ± 1 (1 sd)\"")
 }
 
 /// `[[answer]]`: what somebody says to a warning.
@@ -95,7 +105,10 @@ pub(super) fn answers(root: &Section<'_>, cx: &mut Context) -> Vec<Answer> {
         let reason = cx.required_text(&section, "reason", "why the result stands all the same");
         let by = cx.required_text(&section, "by", "who says so");
         if let (Some(code), Some(reason), Some(by)) = (code, reason, by) {
-            let about = cx.text_of(&section, "about");
+            let about = match section.has("about") {
+                true => cx.required_text(&section, "about", "words of the warning it is about"),
+                false => None,
+            };
             answers.push(Answer { code, about, reason, by, place: section.place });
         }
     }

@@ -111,22 +111,33 @@ fn path(section: &Section<'_>, scope: &Scope<'_>, cx: &mut Context) -> Vec<Point
 }
 
 /// Stretches along the path join each other and cover it: a gap leaves speed
-/// out, an overlap counts it twice.
+/// out, an overlap counts it twice. Beside stretches with a length of their own
+/// only the first may begin at separation and only the last may end at rest.
 fn joined(travel: &[Stretch], path: &[PointId], section: &Section<'_>, unit: &str, cx: &mut Context) {
-    let mut at = 0;
-    for stretch in travel {
-        match stretch.length {
-            StretchLength::Entered(_) => return,
-            StretchLength::AlongPath(from, to) if from == at => at = to,
-            StretchLength::AlongPath(..) => {
-                let message = format!("{unit}: this stretch does not begin where the one before it ends");
-                let notice = Notice::stop("CF-11", message).at(stretch.place);
-                cx.notices.push(notice.expected("from = the point at which the stretch before ends"));
-                return;
-            }
+    let last = path.len().saturating_sub(1);
+    let mut at = Some(0);
+    for (i, stretch) in travel.iter().enumerate() {
+        let StretchLength::AlongPath(from, to) = stretch.length else {
+            at = None;
+            continue;
+        };
+        let follows = at.is_none_or(|at| at == from) && (i == 0 || from > 0);
+        let leaves_room = i + 1 == travel.len() || to < last;
+        if !(follows && leaves_room) {
+            let message = format!(
+                "{unit}: this stretch does not begin where the one before it ends, or leaves no room for the next"
+            );
+            let notice = Notice::stop("CF-11", message).at(stretch.place);
+            cx.notices.push(
+                notice.expected(
+                    "from = the point at which the stretch before ends; to = where the next begins",
+                ),
+            );
+            return;
         }
+        at = Some(to);
     }
-    if !travel.is_empty() && !path.is_empty() && at + 1 != path.len() {
+    if !travel.is_empty() && !path.is_empty() && at.is_some_and(|at| at != last) {
         let message = format!("{unit}: the stretches end before rest");
         cx.notices.push(
             Notice::stop("CF-11", message).at(section.place).expected("a last stretch up to the rest point"),
