@@ -102,15 +102,20 @@ fn drawn(arrow: &Arrow, from: Point, to: Point) -> Vec<Mark> {
     if length < 1.0 {
         return Vec::new();
     }
-    // The name stands beside the middle, to the right of the arrow's way.
+    // The name stands beside the middle, to the right of the arrow's way; that
+    // of the sum, on which others may lie, at its tip.
     let away = (dy / length, -dx / length);
-    let side = if arrow.stroke.dashed { -1.0 } else { 1.0 };
-    let at = ((from.0 + to.0) / 2.0 + 2.5 * side * away.0, (from.1 + to.1) / 2.0 + 2.5 * side * away.1 - 1.0);
-    let anchor = match side * away.0 {
-        x if x > 0.3 => -1,
-        x if x < -0.3 => 1,
-        _ => 0,
-    };
+    let (mut at, mut anchor) = (
+        ((from.0 + to.0) / 2.0 + 2.5 * away.0, (from.1 + to.1) / 2.0 + 2.5 * away.1 - 1.0),
+        match away.0 {
+            x if x > 0.3 => -1,
+            x if x < -0.3 => 1,
+            _ => 0,
+        },
+    );
+    if arrow.stroke.grey > 0.0 {
+        (at, anchor) = ((to.0 + 2.0, to.1 + 1.5), -1);
+    }
     vec![
         Mark::Arrow { from, to, stroke: arrow.stroke },
         Mark::Label { at, anchor, size: 7.5, text: arrow.name.clone() },
