@@ -47,7 +47,8 @@ pub struct Asked {
     pub question: Question,
     /// The result asked about; `None` when it does not stand.
     pub about: Option<Named>,
-    /// Probability that it was above the limit, with its standard error.
+    /// Probability that it was above the limit, with its standard error; no
+    /// number where the result does not stand, nor is the next.
     pub probability: (f64, f64),
     /// Exceeded with a probability of 95 %, SI.
     pub least: f64,
@@ -113,8 +114,12 @@ pub fn analyse(name: &str, text: &str, load: crate::case::Load<'_>, options: Opt
     let Checked { case, mut notices, files } = crate::case::read(name, text, &method_errors(), load);
     let Some(case) = case else { return Outcome { analysis: None, notices, files } };
     let Planned { plan, notices: planned } = backward(&case);
+    // What was not planned for another reason is no slip of the question.
+    let whole = !planned.any_stop();
     notices.extend(planned);
-    notices.extend(unknown_results(&case, &plan));
+    if whole {
+        notices.extend(unknown_results(&case, &plan));
+    }
     let (analysis, found) = evaluate(case, plan, options);
     notices.extend(found);
     let notices = answered(notices, &analysis.case).sorted();
@@ -211,7 +216,8 @@ fn unknown_results(case: &Case, plan: &Plan) -> Vec<Notice> {
         .collect()
 }
 
-/// Puts to each question what the trials say of it.
+/// Puts to each question what the trials say of it; a question whose result
+/// does not stand is kept without an answer.
 fn asked(case: &Case, kept: &[Kept], standing: &[usize], plan: &Plan, sampling: &Sampling) -> Vec<Asked> {
     let answer = |question: &Question, index: usize| {
         // The limits of a result were handed over in the order of its questions.
@@ -219,10 +225,17 @@ fn asked(case: &Case, kept: &[Kept], standing: &[usize], plan: &Plan, sampling: 
         let result = standing.iter().position(|i| plan.results[*i].id == question.of)?;
         let probability = *sampling.above.get(result)?.get(earlier)?;
         let least = sampling.results.get(result)?.as_ref()?.least;
-        let about = kept.iter().find(|(named, _)| named.id == question.of).map(|(named, _)| named.clone());
-        Some(Asked { question: question.clone(), about, probability, least })
+        let (about, _) = kept.iter().find(|(named, _)| named.id == question.of)?;
+        Some(Asked { question: question.clone(), about: Some(about.clone()), probability, least })
     };
-    case.questions.iter().enumerate().filter_map(|(index, question)| answer(question, index)).collect()
+    let unanswered = |question: &Question| Asked {
+        question: question.clone(),
+        about: None,
+        probability: (f64::NAN, f64::NAN),
+        least: f64::NAN,
+    };
+    let questions = case.questions.iter().enumerate();
+    questions.map(|(index, q)| answer(q, index).unwrap_or_else(|| unanswered(q))).collect()
 }
 
 /// Separates the results that stand from those that were refused or that a

@@ -77,6 +77,20 @@ fn print_never_leaves_half_a_file_and_never_touches_an_input() {
     assert_eq!(std::fs::read_dir(folder.path()).unwrap().count(), 2);
 }
 
+/// One block of trials knows no error of its own: it confirms nothing, and it
+/// cannot say that the two propagations differ.
+#[test]
+fn a_single_block_is_not_said_to_confirm_or_to_differ() {
+    let output =
+        retrodict(root()).args(["solve", "cases/quarry-road.toml", "--trials", "10000", "--json"]).output();
+    let json: serde_json::Value = serde_json::from_slice(&output.unwrap().stdout).unwrap();
+    let codes: Vec<&str> =
+        json["notices"].as_array().unwrap().iter().map(|n| n["code"].as_str().unwrap()).collect();
+    assert!(codes.contains(&"S-2") && !codes.contains(&"S-1"), "{codes:?}");
+    let methods = json["results"].as_object().unwrap().values().map(|r| r["method"].as_str().unwrap());
+    assert!(methods.into_iter().all(|m| m == "Monte Carlo"));
+}
+
 #[test]
 fn exit_statuses_are_0_1_and_2() {
     let folder = folder_with(&with_warning());

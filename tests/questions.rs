@@ -103,6 +103,19 @@ fn a_refused_result_gives_no_probability() {
     assert!(json["questions"][1]["probability"].is_null());
 }
 
+/// The impact is refused in planning: that is the fault, not the question.
+#[test]
+fn a_question_is_not_blamed_for_an_impact_that_was_not_planned() {
+    let wall = demo().replace("label = \"eastbound van\"", "label = \"pier\"\nfixed = true");
+    let outcome = case_text(&wall, Trials::Look);
+    let page = terminal::render(&compose(&outcome).unwrap(), false);
+    assert!(page.contains("There is no answer"), "{page}");
+    let json: serde_json::Value = serde_json::from_str(&json::render(&outcome)).unwrap();
+    assert!(json["questions"][0]["probability"].is_null());
+    let codes = common::codes(&outcome);
+    assert!(codes.iter().any(|c| c == "STOP M-8") && !codes.iter().any(|c| c == "STOP CF-7"), "{codes:?}");
+}
+
 #[test]
 fn the_demo_of_the_readme_knows_the_key() {
     assert!(text("README.md").contains("[[question]]"));

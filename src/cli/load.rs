@@ -35,6 +35,7 @@ pub(super) fn load(path: &Path, options: Options) -> Option<Outcome> {
     Some(analyse(&path.to_string_lossy(), &text, &beside, options))
 }
 
+/// The text of a file, or a sentence that says why not.
 pub(super) fn read(path: &Path) -> Result<String, String> {
     let name = path.display();
     let size = std::fs::metadata(path).map_err(|e| format!("{name}: {e}"))?;
@@ -74,17 +75,4 @@ pub(super) fn say(text: &str) {
 /// Writes to standard output; a closed pipe is no fault.
 pub(super) fn put(text: &str) {
     let _ = std::io::stdout().lock().write_all(text.as_bytes());
-}
-
-/// A temporary file starts out private; what the program writes is as readable as
-/// any file.
-#[cfg(unix)]
-pub(super) fn readable(file: &tempfile::NamedTempFile) -> Result<(), String> {
-    use std::os::unix::fs::PermissionsExt;
-    file.as_file().set_permissions(std::fs::Permissions::from_mode(0o644)).map_err(|e| e.to_string())
-}
-
-#[cfg(not(unix))]
-pub(super) fn readable(_: &tempfile::NamedTempFile) -> Result<(), String> {
-    Ok(())
 }

@@ -12,6 +12,7 @@ mod load;
 mod methods;
 mod new;
 mod print;
+mod save;
 mod solve;
 
 pub use args::Arguments;

@@ -2,8 +2,9 @@
 
 use super::args::NewArgs;
 use super::load::{put, say};
+use super::save::{Existing, save};
 use std::io::{BufRead, IsTerminal, Write};
-use std::path::{Path, PathBuf};
+use std::path::PathBuf;
 
 /// Kinds of starter case: name, what it is for, the file.
 pub(super) const STARTERS: &[(&str, &str, &str)] = &[
@@ -28,7 +29,7 @@ pub(super) fn run(args: &NewArgs) -> u8 {
         return 2;
     };
     let file = args.file.clone().unwrap_or_else(|| PathBuf::from(format!("{name}.toml")));
-    match create(&file, text) {
+    match save(&file, text.as_bytes(), Existing::Keep) {
         Ok(()) => {
             let shown = file.display();
             put(&format!("wrote {shown}\nfill it in, then: retrodict check {shown}\n"));
@@ -63,16 +64,4 @@ fn asked() -> Option<String> {
     let by_number = answer.parse::<usize>().ok().and_then(|n| STARTERS.get(n.checked_sub(1)?));
     let chosen = by_number.map_or(answer, |(name, ..)| name);
     (!chosen.is_empty()).then(|| chosen.to_string())
-}
-
-/// Writes a file that is not there yet, whole or not at all.
-fn create(file: &Path, text: &str) -> Result<(), String> {
-    let folder = file.parent().filter(|p| !p.as_os_str().is_empty()).unwrap_or(Path::new("."));
-    let mut temporary = tempfile::NamedTempFile::new_in(folder).map_err(|e| e.kind().to_string())?;
-    temporary.write_all(text.as_bytes()).map_err(|e| e.to_string())?;
-    super::load::readable(&temporary)?;
-    temporary.persist_noclobber(file).map(|_| ()).map_err(|e| match e.error.kind() {
-        std::io::ErrorKind::AlreadyExists => "it is there already; name another file".to_string(),
-        _ => e.error.to_string(),
-    })
 }

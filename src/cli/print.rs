@@ -2,8 +2,8 @@
 
 use super::args::PrintArgs;
 use super::load::{load, put, say, show_notices};
+use super::save::{Existing, save};
 use crate::report::{compose, pdf};
-use std::io::Write;
 use std::path::{Path, PathBuf};
 
 pub(super) fn run(args: &PrintArgs) -> u8 {
@@ -40,7 +40,7 @@ fn here(case: &Path) -> PathBuf {
     PathBuf::from(case.with_extension("pdf").file_name().unwrap_or_else(|| "worksheet.pdf".as_ref()))
 }
 
-/// Writes beside the target and renames, so that no half file is ever seen.
+/// Writes the PDF, but never over the case it was made from.
 fn write(output: &Path, case: &Path, bytes: &[u8]) -> Result<(), String> {
     let same = |a: &Path, b: &Path| matches!((a.canonicalize(), b.canonicalize()), (Ok(a), Ok(b)) if a == b);
     if same(output, case) {
@@ -49,11 +49,5 @@ fn write(output: &Path, case: &Path, bytes: &[u8]) -> Result<(), String> {
     if output.extension().is_none_or(|e| !e.eq_ignore_ascii_case("pdf")) {
         return Err("a PDF file's name ends in .pdf".into());
     }
-    let folder = output.parent().filter(|p| !p.as_os_str().is_empty()).unwrap_or(Path::new("."));
-    let mut file =
-        tempfile::NamedTempFile::new_in(folder).map_err(|e| format!("{}: {e}", folder.display()))?;
-    file.write_all(bytes).map_err(|e| e.to_string())?;
-    file.as_file().sync_all().map_err(|e| e.to_string())?;
-    super::load::readable(&file)?;
-    file.persist(output).map(|_| ()).map_err(|e| e.to_string())
+    save(output, bytes, Existing::Replace)
 }

@@ -1,9 +1,9 @@
 //! The JSON object: a contract for other programs.
 //!
 //! One object: `format`, `version`, `caution`, `case`, `case_sha256`,
-//! `points_sha256`, `seed`,
-//! `trials`, `results` (a map from a stable id), `refused`, `notices`. Values
-//! are in SI units, angles in radians. Keys are never renamed within a format.
+//! `points_sha256`, `seed`, `trials`, `impossible_trials`, `results` (a map from
+//! a stable id), `refused`, `questions`, `notices`. Values are in SI units,
+//! angles in radians. Keys are never renamed within a format.
 
 use super::caution;
 use crate::analysis::Outcome;

@@ -5,6 +5,8 @@
 use super::{Facts, Finding};
 use crate::case::PointId;
 use crate::diag::Notice;
+use crate::method::Formula;
+use crate::physics::path::{Course, Leg};
 use crate::plan::Departure;
 use crate::units::{Kind, System, fixed};
 
@@ -83,14 +85,15 @@ fn departure(facts: &Facts<'_>, d: &Departure) -> Vec<Finding> {
     found
 }
 
-/// Direction and length from one point to another.
+/// Direction and length from one point to another, by the formulas of the
+/// worked lines.
 fn vector(facts: &Facts<'_>, (a, b): (PointId, PointId)) -> (f64, f64) {
     let at = |id: PointId| {
         let point = &facts.case.points[id.0];
         (point.east.dist.estimate(), point.north.dist.estimate())
     };
     let ((e1, n1), (e2, n2)) = (at(a), at(b));
-    (libm::atan2(n2 - n1, e2 - e1), libm::hypot(e2 - e1, n2 - n1))
+    (Course::eval([e1, n1, e2, n2]), Leg::eval([e1, n1, e2, n2]))
 }
 
 /// The smaller angle between two directions, with its sign.

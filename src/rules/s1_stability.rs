@@ -2,7 +2,7 @@
 
 use super::{Facts, Finding};
 use crate::diag::Notice;
-use crate::uncertainty::{Basis, Trials};
+use crate::uncertainty::{Band, Basis, Trials};
 
 pub(super) fn rule(facts: &Facts<'_>) -> Vec<Finding> {
     let mut found = Vec::new();
@@ -14,7 +14,7 @@ pub(super) fn rule(facts: &Facts<'_>) -> Vec<Finding> {
         .results
         .iter()
         .zip(facts.bands)
-        .filter(|(_, b)| b.as_ref().is_some_and(|b| b.basis == Basis::MonteCarlo))
+        .filter(|(_, b)| b.as_ref().is_some_and(|b| b.basis == Basis::MonteCarlo && differs(b)))
         .map(|(r, _)| r.label.as_str())
         .collect();
     if !differ.is_empty() {
@@ -33,4 +33,11 @@ pub(super) fn rule(facts: &Facts<'_>) -> Vec<Finding> {
         found.push(Notice::note("S-2", message).hint("more trials: --trials").into());
     }
     found
+}
+
+/// A single block knows no tolerance, so it cannot say that they differ; where
+/// linear propagation says nothing at all, they do.
+fn differs(band: &Band) -> bool {
+    let (difference, allowed) = band.difference;
+    difference.is_nan() || difference > allowed
 }

@@ -54,10 +54,10 @@ fn table(analysis: &Analysis) -> Table {
             vec![
                 label(a),
                 text.value,
-                if a.band.u > 0.0 {
-                    format!("{} to {}", text.low, text.high)
-                } else {
-                    if a.line.is_some() { "exact".into() } else { "as entered".into() }
+                match (a.band.u > 0.0, a.line) {
+                    (true, _) => format!("{} to {}", text.low, text.high),
+                    (false, Some(_)) => "exact".into(),
+                    (false, None) => "as entered".into(),
                 },
                 text.u,
                 contributors(analysis, a),
@@ -138,7 +138,7 @@ fn reading(analysis: &Analysis) -> String {
     let how = match (of(Basis::Linear), of(Basis::MonteCarlo)) {
         (0, 0) => "Nothing that enters has an uncertainty, so there are no bands.".to_string(),
         (_, 0) => "Bands are by linear propagation, confirmed by Monte Carlo.".to_string(),
-        (0, _) => format!("Bands are by Monte Carlo, since linear propagation differs. {MEAN}"),
+        (0, _) => format!("Bands are by Monte Carlo; linear propagation is not confirmed by it. {MEAN}"),
         (_, _) => {
             let names: Vec<&str> = analysis
                 .results
@@ -147,8 +147,8 @@ fn reading(analysis: &Analysis) -> String {
                 .map(|r| r.named.label.as_str())
                 .collect();
             format!(
-                "Bands are by linear propagation, confirmed by Monte Carlo; but by Monte Carlo, since linear \
-                 propagation differs, for: {}. {MEAN}",
+                "Bands are by linear propagation, confirmed by Monte Carlo; but by Monte Carlo itself, where it does \
+                 not confirm linear propagation, for: {}. {MEAN}",
                 names.join("; ")
             )
         }
